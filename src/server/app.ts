@@ -36,7 +36,10 @@ export interface App {
 /** The demo's clock stands where the practice left it; production's is the system's. */
 async function openClock(env: Env, db: Database): Promise<Clock> {
   if (!env.demo) return systemClock;
-  const [row] = await db.select({ seconds: practice.clockOffsetSeconds }).from(practice).where(eq(practice.id, 1));
+  const [row] = await db
+    .select({ seconds: practice.clockOffsetSeconds })
+    .from(practice)
+    .where(eq(practice.id, 1));
   return new MovingClock((row?.seconds ?? 0) * 1000);
 }
 
@@ -44,7 +47,11 @@ async function openClock(env: Env, db: Database): Promise<Clock> {
 export type AppParts = Partial<Pick<App, 'clock' | 'random' | 'log' | 'stripe' | 'mailer'>>;
 
 /** Opens every connection the process needs. `worker` says whether this process also runs the jobs. */
-export async function createApp(env: Env, { worker }: { worker: boolean }, parts: AppParts = {}): Promise<App> {
+export async function createApp(
+  env: Env,
+  { worker }: { worker: boolean },
+  parts: AppParts = {},
+): Promise<App> {
   const log = parts.log ?? createLog(env.logLevel);
   const pool = openPool(env.databaseUrl, env.databasePool, log);
   const db = openDatabase(pool);

@@ -18,7 +18,10 @@ export interface Limits {
 
 export function createLimits(): Limits {
   const limiters = new Map(
-    Object.entries(LIMITS).map(([name, options]) => [name, new RateLimiterMemory({ keyPrefix: name, ...options })]),
+    Object.entries(LIMITS).map(([name, options]) => [
+      name,
+      new RateLimiterMemory({ keyPrefix: name, ...options }),
+    ]),
   );
   return {
     async take(name, key) {
