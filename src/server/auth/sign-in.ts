@@ -51,7 +51,7 @@ export async function spendLink(
   app: App,
   cookies: AstroCookies,
   input: { address: string; secret: string; clientIp: string; device: string },
-): Promise<void> {
+): Promise<{ userId: string }> {
   await takeOrRefuse(app.limits, 'confirm-network', input.clientIp);
   const ask = cookies.get(ASK_COOKIE)?.value;
   const refused = () =>
@@ -80,7 +80,9 @@ export async function spendLink(
     })
     .where(eq(sessions.sessionToken, hashToken(token)))
     .returning({ userId: sessions.userId });
-  if (session) await acceptInvite(app, session.userId);
+  if (!session) throw refused();
+  await acceptInvite(app, session.userId);
+  return session;
 }
 
 function sessionTokenOf(reply: Response, cookieName: string): string | null {
