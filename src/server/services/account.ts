@@ -1,6 +1,7 @@
 import { DeleteObjectsCommand } from '@aws-sdk/client-s3';
 import { eq } from 'drizzle-orm';
 import type { ProfileInput } from '#contracts/account';
+import { birthDateProblem } from '#domain/minimum-age';
 import type { App } from '#server/app';
 import { members, photos, stripeCustomers, subscriptions, users } from '#server/db/schema/index';
 import { AppError, notFound } from '#server/errors';
@@ -20,11 +21,25 @@ export async function readProfile(app: App, viewer: Viewer) {
 
 /** Writes the profile; birth date and sex may be taken back by leaving them empty. */
 export async function saveProfile(app: App, viewer: Viewer, input: ProfileInput): Promise<void> {
-  const { name, timeZone, units, ...member } = input;
+  const { name, timeZone, units, wants, ...member } = input;
   await app.db.transaction(async (tx) => {
     await tx.update(users).set({ name, timeZone, units }).where(eq(users.id, viewer.id));
-    await tx.update(members).set(member).where(eq(members.userId, viewer.id));
+    await tx
+      .update(members)
+      .set({
+        ...member,
+        wantsReminders: wants.has('reminders'),
+        wantsLetter: wants.has('letter'),
+        measuresBody: wants.has('body'),
+      })
+      .where(eq(members.userId, viewer.id));
   });
+}
+
+/** The one rule about age that the form itself cannot check: it needs today. */
+export function ageProblem(app: App, { birthDate }: Pick<ProfileInput, 'birthDate'>): Record<string, string> {
+  const problem = birthDate && birthDateProblem(birthDate, app.clock.now());
+  return problem ? { birthDate: problem } : {};
 }
 
 /**
