@@ -9,19 +9,34 @@ interface ChangeFacts {
   readonly difference: { readonly value: number; readonly marks: number };
 }
 
-const WORDS = ['no', 'one', 'two', 'three', 'four', 'five', 'six', 'seven', 'eight', 'nine', 'ten', 'eleven', 'twelve'];
+const WORDS = [
+  'no',
+  'one',
+  'two',
+  'three',
+  'four',
+  'five',
+  'six',
+  'seven',
+  'eight',
+  'nine',
+  'ten',
+  'eleven',
+  'twelve',
+];
 
 /** Names of one and of several, and what a rise and a fall are called. Reps and stairs are counted without a name. */
-const UNIT_WORDS: Readonly<Record<TestUnit, readonly [one: string, many: string, up: string, down: string]>> = {
-  reps: ['', '', 'more', 'fewer'],
-  steps: ['', '', 'more', 'fewer'],
-  points: ['', '', 'more', 'fewer'],
-  seconds: ['second', 'seconds', 'longer', 'shorter'],
-  beats: ['beat', 'beats', 'more', 'fewer'],
-  metres: ['metre', 'metres', 'further', 'shorter'],
-  kilograms: ['kilogram', 'kilograms', 'more', 'less'],
-  centimetres: ['centimetre', 'centimetres', 'more', 'less'],
-};
+const UNIT_WORDS: Readonly<Record<TestUnit, readonly [one: string, many: string, up: string, down: string]>> =
+  {
+    reps: ['', '', 'more', 'fewer'],
+    steps: ['', '', 'more', 'fewer'],
+    points: ['', '', 'more', 'fewer'],
+    seconds: ['second', 'seconds', 'longer', 'shorter'],
+    beats: ['beat', 'beats', 'more', 'fewer'],
+    metres: ['metre', 'metres', 'further', 'shorter'],
+    kilograms: ['kilogram', 'kilograms', 'more', 'less'],
+    centimetres: ['centimetre', 'centimetres', 'more', 'less'],
+  };
 
 /**
  * The judgement in words. The error named is the smallest real change at 95 %, the smear on the jamb.

@@ -72,7 +72,7 @@ export class ChangeInputError extends Error {
 /** Chance at which a change is called real, and at which it is called probable. */
 export const REAL_CHANCE = 0.975;
 export const PROBABLE_CHANCE = 0.9;
-/** Below these a change is only called if it is a real one. */
+/** With fewer marks, no change seen means that it is too early to say. */
 export const EARLY_MARKS = 3;
 /** All marks within this many days: always too early. */
 export const EARLY_DAYS = 7;
@@ -94,7 +94,8 @@ export function judgeChange(question: ChangeQuestion): ChangeJudgement {
   if (!first || !last) return { ...NOTHING, ...errors(priorError), sentence: 'No marks yet.', otherForms };
 
   const sign = question.better === 'more' ? 1 : -1;
-  const end = Math.max(question.today ?? last.atDays, last.atDays);
+  // Two marks say nothing of the days after them.
+  const end = marks.length > 2 ? Math.max(question.today ?? last.atDays, last.atDays) : last.atDays;
   const since = Math.min(Math.max(question.since ?? first.atDays, first.atDays), last.atDays);
   const weekOf = (day: number): number => (day - first.atDays) / DAYS_A_WEEK;
   const fit = fitTrend({
@@ -119,11 +120,21 @@ export function judgeChange(question: ChangeQuestion): ChangeJudgement {
     now: { atDays: last.atDays, mark: last.value, level: level.value },
     difference: { ...difference, marks: last.value - beforeMark.value },
     chanceBetter: fit.chanceBetter,
-    points: curvePoints(marks, fit.curve.map((point) => turn(point)), end, level),
+    points: curvePoints(
+      marks,
+      fit.curve.map((point) => turn(point)),
+      end,
+      level,
+    ),
     outliers: fit.outliers.flatMap((index) => marks[index] ?? []),
     otherForms,
   };
-  const sentence = describeChange({ ...judged, unit: test.unit, better: question.better, count: marks.length });
+  const sentence = describeChange({
+    ...judged,
+    unit: test.unit,
+    better: question.better,
+    count: marks.length,
+  });
   return { ...judged, sentence };
 }
 
@@ -151,10 +162,9 @@ function verdictOf(chanceBetter: number, count: number, spanDays: number): Verdi
   if (count < 2 || spanDays < EARLY_DAYS) return 'too early';
   if (chanceBetter >= REAL_CHANCE) return 'really better';
   if (chanceBetter <= 1 - REAL_CHANCE) return 'really lower';
-  if (count < EARLY_MARKS) return 'too early';
   if (chanceBetter >= PROBABLE_CHANCE) return 'probably better';
   if (chanceBetter <= 1 - PROBABLE_CHANCE) return 'probably lower';
-  return 'no real change yet';
+  return count < EARLY_MARKS ? 'too early' : 'no real change yet';
 }
 
 /** Sorted marks of the form of the last one. */

@@ -2,9 +2,11 @@
  * Local linear trend in continuous time, for marks at irregular dates.
  *
  *   mark  = level − share × learning + error         error    ~ N(0, σ² × spread)
- *   level moves by slope × weeks + N(0, σ² × levelVariance × weeks)
+ *   level moves by the slope, and by N(0, σ² × levelVariance × weeks)
  *   slope moves by N(0, σ² × bendVariance × weeks)   slope(0) ~ N(0, σ² × slopeVariance)
  *
+ * The slope may fade (damping, share a week): gains come quickly at first and level off, and after missing weeks
+ * nobody is thought to have gone on improving at the old pace. With damping 0 it is the plain local linear trend.
  * Every variance is in units of σ² (the squared typical error), so σ² comes out in closed form with a scaled
  * inverse chi-square prior. Larger is better: callers turn the sign of the other tests.
  * Source: Durbin & Koopman, Time Series Analysis by State Space Methods, chapters 2 to 4 (memory); the code is
@@ -14,6 +16,7 @@ export interface TrendModel {
   readonly slopeVariance: number;
   readonly bendVariance: number;
   readonly levelVariance: number;
+  readonly damping: number;
 }
 
 export interface TrendInput {
@@ -45,6 +48,22 @@ export interface TrendState {
   readonly sumOfSquares: number;
 }
 
+/** Share of a slope that is left after `weeks`. */
+function keepOf(damping: number, weeks: number): number {
+  return damping === 0 ? 1 : Math.exp(-damping * weeks);
+}
+
+/** How far a slope of 1 carries the level while it fades to `keep`. */
+function reachOf(damping: number, weeks: number, keep: number): number {
+  return damping === 0 ? weeks : (1 - keep) / damping;
+}
+
+/** Variance that bends add to the level (integrated Ornstein-Uhlenbeck process, or random walk without damping). */
+function bendNoise(damping: number, weeks: number, reach: number): number {
+  if (damping === 0) return weeks ** 3 / 3;
+  return (weeks - reach - (damping * reach * reach) / 2) / damping ** 2;
+}
+
 /** Per mark: predicted level, slope, learning; their six covariances; innovation, its variance, three gains. */
 const ROW = 14;
 
@@ -60,6 +79,7 @@ export function makeTrace(marks: number): Float64Array {
  */
 export function filterTrend(input: TrendInput, model: TrendModel, trace?: Float64Array): TrendState {
   const { weeks, values, spreads, shares } = input;
+  const { damping, bendVariance, levelVariance } = model;
   const count = values.length;
   const firstShare = shares[0] ?? 0;
   const v = input.learningVariance;
@@ -83,38 +103,42 @@ export function filterTrend(input: TrendInput, model: TrendModel, trace?: Float6
   let logDeterminant = 0;
   let sumOfSquares = 0;
 
-  const moveTo = (target: number): void => {
-    const dt = target - week;
-    if (dt > 0) {
-      level += dt * slope;
-      pLL +=
-        dt * (2 * pLS + dt * pSS + model.levelVariance + (model.bendVariance * dt * dt) / 3);
-      pLS += dt * (pSS + (model.bendVariance * dt) / 2);
-      pLE += dt * pSE;
-      pLB += dt * pSB;
-      pSS += model.bendVariance * dt;
-      week = target;
-    }
-  };
-  const setBase = (): void => {
-    base = level;
-    pLB = pLL;
-    pSB = pLS;
-    pEB = pLE;
-    pBB = pLL;
-    isBaseSet = true;
-  };
-
   if (trace) {
     trace.set([level, slope, learning, pLL, pLS, pLE, pSS, pSE, pEE], 0);
   }
-  for (let i = 1; i < count; i += 1) {
-    const target = weeks[i] ?? week;
-    if (!isBaseSet && target > baseWeek) {
-      moveTo(baseWeek);
-      setBase();
+  let i = 1;
+  // Each turn moves to the next date: a mark, the base week on the way, or the end.
+  for (;;) {
+    const isEnd = i >= count;
+    const next = Math.max(week, isEnd ? input.endWeek : (weeks[i] ?? week));
+    const isBaseNext = !isBaseSet && (isEnd || next > baseWeek);
+    const target = isBaseNext ? Math.min(baseWeek, next) : next;
+    const dt = target - week;
+    if (dt > 0) {
+      const keep = keepOf(damping, dt);
+      const reach = reachOf(damping, dt, keep);
+      level += reach * slope;
+      slope *= keep;
+      pLL +=
+        reach * (2 * pLS + reach * pSS) + levelVariance * dt + bendVariance * bendNoise(damping, dt, reach);
+      pLS = keep * (pLS + reach * pSS) + (bendVariance * reach * reach) / 2;
+      pLE += reach * pSE;
+      pLB += reach * pSB;
+      pSS = keep * keep * pSS + (bendVariance * reach * (1 + keep)) / 2;
+      pSE *= keep;
+      pSB *= keep;
+      week = target;
     }
-    moveTo(target);
+    if (isBaseNext) {
+      base = level;
+      pLB = pLL;
+      pSB = pLS;
+      pEB = pLE;
+      pBB = pLL;
+      isBaseSet = true;
+      continue;
+    }
+    if (isEnd) break;
     const c = shares[i] ?? 0;
     const zL = pLL - c * pLE;
     const zS = pLS - c * pSE;
@@ -159,12 +183,8 @@ export function filterTrend(input: TrendInput, model: TrendModel, trace?: Float6
     pBB -= kB * zB;
     logDeterminant += Math.log(variance);
     sumOfSquares += (innovation * innovation) / variance;
+    i += 1;
   }
-  if (!isBaseSet) {
-    moveTo(Math.min(baseWeek, Math.max(input.endWeek, week)));
-    setBase();
-  }
-  moveTo(input.endWeek);
   return {
     level,
     slope,
@@ -189,7 +209,8 @@ export interface Smoothed {
  * Fixed-interval smoother by the backward recursion of r and N (no matrix is inverted), from the trace of
  * `filterTrend`. The misfit is the standardised smoothing error, which equals the leave-one-out residual.
  */
-export function smoothTrend(input: TrendInput, trace: Float64Array): Smoothed {
+export function smoothTrend(input: TrendInput, model: TrendModel, trace: Float64Array): Smoothed {
+  const { damping } = model;
   const count = input.values.length;
   const levels = new Float64Array(count);
   const variances = new Float64Array(count);
@@ -205,17 +226,16 @@ export function smoothTrend(input: TrendInput, trace: Float64Array): Smoothed {
   let nEE = 0;
   for (let i = count - 1; i >= 0; i -= 1) {
     const at = i * ROW;
-    const read = (offset: number): number => trace[at + offset] ?? 0;
     if (i > 0) {
       const c = input.shares[i] ?? 0;
-      const kL = read(11);
-      const kS = read(12);
-      const kE = read(13);
+      const kL = trace[at + 11] ?? 0;
+      const kS = trace[at + 12] ?? 0;
+      const kE = trace[at + 13] ?? 0;
       const gL = nLL * kL + nLS * kS + nLE * kE;
       const gS = nLS * kL + nSS * kS + nSE * kE;
       const gE = nLE * kL + nSE * kS + nEE * kE;
-      const d = 1 / read(10) + kL * gL + kS * gS + kE * gE;
-      const u = read(9) / read(10) - (kL * rL + kS * rS + kE * rE);
+      const d = 1 / (trace[at + 10] ?? 0) + kL * gL + kS * gS + kE * gE;
+      const u = (trace[at + 9] ?? 0) / (trace[at + 10] ?? 0) - (kL * rL + kS * rS + kE * rE);
       misfits[i] = u / Math.sqrt(d);
       rL += u;
       rE -= c * u;
@@ -227,18 +247,20 @@ export function smoothTrend(input: TrendInput, trace: Float64Array): Smoothed {
     } else {
       misfits[0] = nLL > 0 ? -rL / Math.sqrt(nLL) : 0;
     }
-    const pL = read(3);
-    const pS = read(4);
-    const pE = read(5);
-    levels[i] = read(0) + pL * rL + pS * rS + pE * rE;
+    const pL = trace[at + 3] ?? 0;
+    const pS = trace[at + 4] ?? 0;
+    const pE = trace[at + 5] ?? 0;
+    levels[i] = (trace[at] ?? 0) + pL * rL + pS * rS + pE * rE;
     const quadratic =
       pL * (pL * nLL + 2 * (pS * nLS + pE * nLE)) + pS * (pS * nSS + 2 * pE * nSE) + pE * pE * nEE;
     variances[i] = Math.max(0, pL - quadratic);
     const dt = i > 0 ? (input.weeks[i] ?? 0) - (input.weeks[i - 1] ?? 0) : 0;
-    rS += dt * rL;
-    nSS += dt * (2 * nLS + dt * nLL);
-    nLS += dt * nLL;
-    nSE += dt * nLE;
+    const keep = keepOf(damping, dt);
+    const reach = reachOf(damping, dt, keep);
+    rS = reach * rL + keep * rS;
+    nSS = reach * (reach * nLL + 2 * keep * nLS) + keep * keep * nSS;
+    nLS = reach * nLL + keep * nLS;
+    nSE = reach * nLE + keep * nSE;
   }
   return { levels, variances, misfits };
 }

@@ -3,7 +3,8 @@ import { standardErrorOfMeasurement } from './typical-error.ts';
 /** How far a value may be trusted: read in a source, derived from read values, remembered, or a trade rule. */
 export type ErrorFlag = 'published' | 'derived' | 'memory' | 'common practice, no source';
 
-export type TestUnit = 'reps' | 'steps' | 'seconds' | 'beats' | 'metres' | 'kilograms' | 'centimetres' | 'points';
+export type TestUnit =
+  'reps' | 'steps' | 'seconds' | 'beats' | 'metres' | 'kilograms' | 'centimetres' | 'points';
 
 /**
  * What is believed about a test's error before the member has repeated it.
@@ -39,7 +40,8 @@ export const TEST_ERRORS = {
     absolute: 1.8,
     relative: 0.06,
     learns: true,
-    source: 'No paper read gives the error of one-minute sit-ups in adults; the member’s own repeats take over',
+    source:
+      'No paper read gives the error of one-minute sit-ups in adults; the member’s own repeats take over',
     flag: 'common practice, no source',
   },
   'curl-up': {
