@@ -103,7 +103,7 @@ describe('jamb', () => {
       const drawn = drawJamb(
         jambOf({ marks: [{ value: mark, day: 'x' }], lowerIsBetter, range: { from: 0, to: 40 }, bands: [] }),
       );
-      return Number(/M107 ([\d.]+)H117/.exec(drawn)?.[1]);
+      return Number(/M123 ([\d.]+)H133/.exec(drawn)?.[1]);
     };
     expect(height(false, 30)).toBeLessThan(height(false, 10));
     expect(height(true, 30)).toBeGreaterThan(height(true, 10));

@@ -46,8 +46,8 @@ export interface Jamb {
 const LABEL_GAP_PX = 25;
 const RIGHT_GAP_PX = 17;
 const FRAMES: Record<'wall' | 'desk', Frame> = {
-  wall: { width: 330, height: 440, boardX: 118, boardWidth: 92, top: 14, foot: 400 },
-  desk: { width: 300, height: 300, boardX: 104, boardWidth: 66, top: 14, foot: 268 },
+  wall: { width: 348, height: 440, boardX: 134, boardWidth: 92, top: 14, foot: 400 },
+  desk: { width: 322, height: 300, boardX: 128, boardWidth: 66, top: 14, foot: 268 },
 };
 
 const plain = (value: number) => String(Math.round(value * 10) / 10);
