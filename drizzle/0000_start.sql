@@ -484,6 +484,7 @@ CREATE INDEX "alerts_open" ON "alerts" USING btree ("member_id") WHERE "alerts".
 CREATE INDEX "marks_member" ON "marks" USING btree ("member_id","test","taken_at");--> statement-breakpoint
 CREATE INDEX "target_overrides_member" ON "target_overrides" USING btree ("member_id","created_at");--> statement-breakpoint
 CREATE INDEX "test_days_member" ON "test_days" USING btree ("member_id","taken_on");--> statement-breakpoint
+CREATE UNIQUE INDEX "test_days_one_open" ON "test_days" USING btree ("member_id") WHERE "test_days"."finished_at" is null;--> statement-breakpoint
 CREATE INDEX "training_sessions_member" ON "training_sessions" USING btree ("member_id","done_at");--> statement-breakpoint
 CREATE INDEX "training_sessions_flight" ON "training_sessions" USING btree ("flight_id","week");--> statement-breakpoint
 CREATE UNIQUE INDEX "training_sessions_one_planned" ON "training_sessions" USING btree ("member_id") WHERE "training_sessions"."done_at" is null;

@@ -152,6 +152,9 @@ export const testDays = pgTable(
   (t) => [
     unique('test_days_week').on(t.flightId, t.week),
     index('test_days_member').on(t.memberId, t.takenOn),
+    uniqueIndex('test_days_one_open')
+      .on(t.memberId)
+      .where(sql`${t.finishedAt} is null`),
     check('test_days_week_known', sql`${t.week} in (0, 4, 8, 12)`),
   ],
 );

@@ -1,0 +1,74 @@
+import { useEffect, useRef, useState } from 'react';
+
+const SAVE_AFTER_MS = 800;
+
+export type DraftBody = Record<string, string | null>;
+
+/** Reads a copy kept on this device for when the line was down. */
+function readLocal<T extends DraftBody>(key: string): T | null {
+  try {
+    return JSON.parse(localStorage.getItem(`draft ${key}`) ?? 'null') as T | null;
+  } catch {
+    return null;
+  }
+}
+
+/**
+ * Form contents that outlive a reload and a lost line. They go to the server shortly after the last key press; until the
+ * server has them, a copy stays on this device and is preferred at the next opening.
+ * @returns the values, a setter for one field, what to say about keeping them, and `drop` for after the sending
+ */
+export function useDraft<T extends DraftBody>(key: string, start: T) {
+  const [values, setValues] = useState(start);
+  const [kept, setKept] = useState('');
+  const changed = useRef(false);
+
+  useEffect(() => {
+    const local = readLocal<T>(key);
+    if (local) {
+      setValues((before) => ({ ...before, ...local }));
+      changed.current = true;
+    }
+  }, [key]);
+
+  useEffect(() => {
+    if (!changed.current) return;
+    localStorage.setItem(`draft ${key}`, JSON.stringify(values));
+    const timer = setTimeout(() => void save(key, values, setKept), SAVE_AFTER_MS);
+    const again = () => void save(key, values, setKept);
+    window.addEventListener('online', again);
+    return () => {
+      clearTimeout(timer);
+      window.removeEventListener('online', again);
+    };
+  }, [key, values]);
+
+  return {
+    values,
+    kept,
+    set: (name: keyof T & string, value: string | null) => {
+      changed.current = true;
+      setValues((before) => ({ ...before, [name]: value }));
+    },
+    drop: () => {
+      changed.current = false;
+      localStorage.removeItem(`draft ${key}`);
+    },
+  };
+}
+
+async function save(key: string, body: DraftBody, say: (words: string) => void): Promise<void> {
+  try {
+    const reply = await fetch(`/api/drafts/${encodeURIComponent(key)}`, {
+      method: 'PUT',
+      headers: { 'content-type': 'application/json' },
+      body: JSON.stringify({ body }),
+    });
+    if (!reply.ok) throw new Error(String(reply.status));
+    localStorage.removeItem(`draft ${key}`);
+    const time = new Date().toLocaleTimeString('en-GB', { hour: '2-digit', minute: '2-digit' });
+    say(`Draft kept ${time}`);
+  } catch {
+    say('Kept on this device; it goes up when the line is back.');
+  }
+}
