@@ -7,6 +7,7 @@ import { writeFileSync } from 'node:fs';
 import {
   limitFor,
   measureCoverage,
+  measureLevelErrors,
   medianWeek,
   MODEL_NAME,
   shareEver,
@@ -18,7 +19,7 @@ import {
 import { CONDITIONS, gainsOverAFlight, stays, type Conditions } from './simulate-change/members.ts';
 
 const SEED = 20_251;
-const members = Number(process.argv[2] ?? 600);
+const members = Number(process.argv[2] ?? 1000);
 const GAINS = [1, 2, 3];
 /** All rules set to this yearly share of false alarms, so that their speed can be compared. */
 const EQUAL_YEARLY = 0.05;
@@ -27,6 +28,14 @@ const COMPARED = ['Clean', 'Learning', 'All three', 'Test days'].map(conditionsN
 const coverage = CONDITIONS.map((conditions, i) => ({
   conditions: conditions.name,
   weeks: measureCoverage(conditions, members * 3, SEED + i).map(rounded),
+}));
+
+const levels = CONDITIONS.map((conditions, i) => ({
+  conditions: conditions.name,
+  errors: measureLevelErrors(conditions, Math.ceil(members / 4), SEED + 50 + i).map(({ name, error }) => ({
+    name,
+    error: round(error),
+  })),
 }));
 
 const rules = COMPARED.map((conditions, i) => {
@@ -59,7 +68,7 @@ function noticed(years: Parameters<typeof medianWeek>[0], watcher: number, limit
 
 writeFileSync(
   new URL('../src/domain/change/calibration.json', import.meta.url),
-  `${JSON.stringify({ seed: SEED, members, equalYearly: EQUAL_YEARLY, coverage, rules }, null, 2)}\n`,
+  `${JSON.stringify({ seed: SEED, members, equalYearly: EQUAL_YEARLY, coverage, levels, rules }, null, 2)}\n`,
 );
 printTables();
 
@@ -71,6 +80,11 @@ function printTables(): void {
   for (const row of coverage) {
     const cells = row.weeks.map((cell) => `${percent(cell.level)} (${percent(cell.change)})`);
     console.log(`${row.conditions.padEnd(12)}${cells.map((cell) => cell.padStart(16)).join('')}`);
+  }
+  console.log('\nWhere the member stands now: root mean square error in typical errors');
+  for (const row of levels) {
+    const cells = row.errors.map(({ name, error }) => `${name} ${error.toFixed(2)}`);
+    console.log(`${row.conditions.padEnd(12)}${cells.join(' · ')}`);
   }
   for (const table of rules) {
     console.log(

@@ -1,6 +1,8 @@
 import { judgeChange, type ChangeJudgement, type ChangeMark } from '../../src/domain/change/judge-change.ts';
-import { PLAIN_RULES } from '../../src/domain/change/plain-rules/rules.ts';
+import { PLAIN_LEVELS, PLAIN_RULES } from '../../src/domain/change/plain-rules/rules.ts';
 import { drawLife, drawMember, PRIOR_ERROR, seededRandom, type Conditions, type Path } from './members.ts';
+
+export const MODEL_NAME = 'Local linear trend (ours)';
 
 export const CHECK_WEEKS = [4, 8, 13, 26, 52] as const;
 
@@ -36,14 +38,38 @@ export function measureCoverage(conditions: Conditions, members: number, seed: n
   }));
 }
 
+/** Root mean square error of 'where the member stands now' after 3, 10, 17, … marks, in typical errors, for each way to say it. */
+export function measureLevelErrors(conditions: Conditions, members: number, seed: number) {
+  const random = seededRandom(seed);
+  const names = [MODEL_NAME, ...PLAIN_LEVELS.map((plain) => plain.name)];
+  const sums = names.map(() => 0);
+  let looks = 0;
+  for (let i = 0; i < members; i += 1) {
+    const member = drawMember(drawLife(random), conditions, random);
+    for (let end = 3; end <= member.marks.length; end += 7) {
+      const marks = member.marks.slice(0, end);
+      const weeks = marks.map((mark) => mark.atDays / 7);
+      const series = { weeks, values: marks.map((mark) => mark.value), typicalError: PRIOR_ERROR };
+      const truth = member.levelAt(weeks.at(-1) ?? 0);
+      const levels = [
+        judgeSitUps(marks).level?.value ?? 0,
+        ...PLAIN_LEVELS.map((plain) => plain.levelOf(series)),
+      ];
+      levels.forEach(
+        (level, at) => (sums[at] = (sums[at] ?? 0) + ((level - truth) / member.typicalError) ** 2),
+      );
+      looks += 1;
+    }
+  }
+  return names.map((name, at) => ({ name, error: Math.sqrt((sums[at] ?? 0) / looks) }));
+}
+
 /** A rule's score after each mark, from the second on: above the limit it says 'really better'. */
 export interface Watcher {
   readonly name: string;
   readonly usualLimit: number;
   readonly score: (marks: readonly ChangeMark[]) => number;
 }
-
-export const MODEL_NAME = 'Local linear trend (ours)';
 
 export const WATCHERS: readonly Watcher[] = [
   {

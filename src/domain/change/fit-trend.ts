@@ -6,13 +6,13 @@ import { BENDING_MODEL, FREE_MODEL, TREND_MODELS, type WeightedModel } from './t
 export const PRIOR_REPEATS = 8;
 
 /**
- * Learning is modelled, not thrown away: a first mark is expected to be 0.4 of a typical error low, SD 0.45, halving
+ * Learning is modelled, not thrown away: a first mark is expected to be 0.4 of a typical error low, SD 0.4, halving
  * with each repeat, three repeats in all. Dropping the first mark would cost members their baseline; believing it
  * would call the knack of the test a gain. Common practice, no source; sizes set by simulation.
  */
 export const LEARNING_SHARES: readonly number[] = [1, 0.5, 0.25];
 export const LEARNING_MEAN = 0.4;
-export const LEARNING_SD = 0.45;
+export const LEARNING_SD = 0.4;
 
 /** A mark further than this many errors from what the other marks say counts less: (limit ÷ misfit)². */
 export const MISFIT_LIMIT = 2;

@@ -9,18 +9,19 @@ export interface WeightedModel extends TrendModel {
 /**
  * The noise of the level and of the slope is not fixed: each of these is tried, and the answers are averaged by
  * how well each foretold the marks (likelihood × belief). Standard deviations per week (slope), per week^1.5
- * (bend) and per √week (wander) in typical errors; damping is the share of a slope that fades in a week. Chosen by simulation; common practice, no source.
+ * (bend) and per √week (wander) in typical errors; damping is the share of a slope that fades in a week.
+ * Chosen by simulation; common practice, no source.
  */
 export const TREND_MODELS: readonly WeightedModel[] = [
-  model('still', 0.2, { slope: 0, bend: 0, wander: 0.02, damping: 0 }),
-  model('steady', 0.45, { slope: 0.35, bend: 0.005, wander: 0, damping: 0.08 }),
-  model('bends slowly', 0.2, { slope: 0.45, bend: 0.03, wander: 0, damping: 0.08 }),
-  model('bends', 0.1, { slope: 0.45, bend: 0.08, wander: 0, damping: 0.08 }),
-  model('wanders', 0.05, { slope: 0.2, bend: 0.02, wander: 0.15, damping: 0.1 }),
+  model('still', 0.12, { slope: 0, bend: 0, wander: 0.02, damping: 0 }),
+  model('steady', 0.55, { slope: 0.35, bend: 0.004, wander: 0, damping: 0.09 }),
+  model('bends slowly', 0.2, { slope: 0.45, bend: 0.025, wander: 0, damping: 0.09 }),
+  model('bends', 0.1, { slope: 0.45, bend: 0.08, wander: 0, damping: 0.09 }),
+  model('wanders', 0.03, { slope: 0.2, bend: 0.02, wander: 0.15, damping: 0.1 }),
 ];
 
 /** Used to find marks that do not fit: supple enough not to take a real turn for a wild day. */
-export const BENDING_MODEL = model('bends', 1, { slope: 0.45, bend: 0.1, wander: 0, damping: 0.08 });
+export const BENDING_MODEL = model('bends', 1, { slope: 0.45, bend: 0.1, wander: 0, damping: 0.09 });
 
 /** No belief about the pace at all: two marks stand for themselves. */
 export const FREE_MODEL = model('free', 1, { slope: 30, bend: 0, wander: 0, damping: 0 });

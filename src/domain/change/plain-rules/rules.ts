@@ -1,5 +1,9 @@
 import { SMALLEST_CHANGE_95 } from '../typical-error.ts';
+import { student95 } from '../student-t.ts';
+import { leastSquares } from './least-squares.ts';
+import { lowess } from './lowess.ts';
 import { mannKendall } from './mann-kendall.ts';
+import { smoothHolt, smoothOnce } from './smoothing.ts';
 import { theilSen } from './theil-sen.ts';
 
 /** Marks so far, larger is better. */
@@ -53,6 +57,37 @@ export const PLAIN_RULES: readonly PlainRule[] = [
       return fit ? fit.low / typicalError : -1;
     },
   },
+  {
+    name: 'Straight line',
+    usualLimit: 0,
+    score: ({ weeks, values }) => {
+      const line = values.length < 4 ? null : leastSquares(weeks, values);
+      // A perfect line has no error left to compare with.
+      if (!line || line.slopeError === 0) return -1;
+      return line.slope / line.slopeError - student95(Math.max(4, values.length - 2));
+    },
+  },
+];
+
+/** A plain way to say where a member stands now. */
+export interface PlainLevel {
+  readonly name: string;
+  readonly levelOf: (series: Series) => number;
+}
+
+/** Levels that the model's level is set beside. Weights of the smoothers: common practice, no source. */
+export const PLAIN_LEVELS: readonly PlainLevel[] = [
+  { name: 'Last mark', levelOf: ({ values }) => values.at(-1) ?? 0 },
+  { name: 'Mean of the last four', levelOf: ({ values }) => mean(values.slice(-WINDOW)) },
+  { name: 'Single smoothing, 0.3', levelOf: ({ values }) => smoothOnce([...values, 0], 0.3).at(-1) ?? 0 },
+  {
+    name: 'Holt, 0.4 and 0.1',
+    levelOf: ({ values }) =>
+      smoothHolt(values.slice(1), 0.4, 0.1, { level: values[0] ?? 0, trend: 0 }).at(-1)?.level ??
+      values[0] ??
+      0,
+  },
+  { name: 'Lowess', levelOf: ({ weeks, values }) => lowess(weeks, values).at(-1) ?? 0 },
 ];
 
 function mean(values: readonly number[]): number {
