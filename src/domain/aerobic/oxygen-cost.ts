@@ -8,6 +8,9 @@ export function metsOf(vo2: number): number {
   return vo2 / ONE_MET;
 }
 
+/** Metres a minute in one mile an hour, rounded as ACSM prints it (26.8224 exactly). */
+export const ACSM_METRES_PER_MINUTE_PER_MPH = 26.8;
+
 /** The published range of the stepping equation: rounds a minute and height of the step. */
 export const STEPPING_RANGE = { roundsPerMinute: [12, 30], stepHeightM: [0.04, 0.4] } as const;
 

@@ -42,12 +42,19 @@ interface FieldTest {
 function placeVo2maxOf({ speech, value, vo2max, resultFor }: FieldTest, person: Person): Placed | null {
   const row = rowFor(VO2MAX_CUTS, person.sex, person.ageYears);
   if (!row) return null;
+  const isEstimate = speech !== SPEAK_VO2MAX;
+  const say = (result: number) => `${speech.say(result)}, about ${SPEAK_VO2MAX.say(vo2max)}`;
   const placed = placeByWords(
-    { table: VO2MAX_COOPER, speech, value, people: peopleOf(person.sex, row.band) },
+    {
+      table: VO2MAX_COOPER,
+      speech: isEstimate ? { ...speech, say } : speech,
+      value,
+      people: peopleOf(person.sex, row.band),
+    },
     VO2MAX_WORDS,
     row.cells.map((cut, i) => ({
       value: resultFor(cut),
-      flag: 'published',
+      flag: isEstimate ? 'derived' : 'published',
       isStrict: i === row.cells.length - 1,
     })),
   );

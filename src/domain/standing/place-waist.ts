@@ -25,7 +25,9 @@ export function placeWaist({ value, detail }: StandingQuery, ageYears: number): 
   });
   if (!answer.ok) return noNumber(answer.reason, answer.sentence);
   const rank = WAIST_BANDS.findIndex(({ word }) => word === answer.band.word);
-  const lower = WAIST_BANDS[rank - 1];
+  // Below the healthy band there is nothing to aim at.
+  const lower =
+    rank > WAIST_BANDS.findIndex(({ word }) => word === 'healthy') ? WAIST_BANDS[rank - 1] : undefined;
   return {
     kind: 'placed',
     table: WAIST_NICE,

@@ -28,12 +28,15 @@ export interface PlaceInput {
   readonly people: string;
 }
 
+/** 0.1 + 0.2 as a person means it. */
+const withoutBinaryRest = (value: number): number => Number(value.toFixed(6));
+
 /** A difference in whole steps of the test, rounded up; a strict cut needs one step beyond it. */
 function needed(speech: Speech, value: number, cut: Cut): number {
   const gap = Math.abs(cut.value - value) / speech.step;
   // 1e-9 forgives the binary rest of sums such as 0.1 + 0.2.
   const steps = cut.isStrict ? Math.floor(gap + 1e-9) + 1 : Math.ceil(gap - 1e-9);
-  return steps * speech.step;
+  return withoutBinaryRest(steps * speech.step);
 }
 
 function meets(speech: Speech, value: number, { value: cut, isStrict }: Cut): boolean {
@@ -50,7 +53,9 @@ function neighboursOf(
 ): Neighbours {
   return {
     up: up ? { cut: up.value, needed: needed(speech, value, up), name: up.name } : null,
-    down: down ? { cut: down.value, margin: Math.abs(value - down.value), name: down.name } : null,
+    down: down
+      ? { cut: down.value, margin: withoutBinaryRest(Math.abs(value - down.value)), name: down.name }
+      : null,
   };
 }
 
