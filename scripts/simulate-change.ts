@@ -4,10 +4,12 @@
  * The seed is fixed and no date is written, so the same code gives the same file.
  */
 import { writeFileSync } from 'node:fs';
+import { CALIBRATED } from '../src/domain/change/calibrated.ts';
 import {
   limitFor,
   measureCoverage,
   measureLevelErrors,
+  measureSinceLanding,
   medianWeek,
   MODEL_NAME,
   shareEver,
@@ -37,6 +39,16 @@ const levels = CONDITIONS.map((conditions, i) => ({
     error: round(error),
   })),
 }));
+
+const sinceLanding = COMPARED.flatMap((conditions, i) =>
+  [0, 3, 6].map((gain) => ({
+    conditions: conditions.name,
+    gain,
+    weeks: measureSinceLanding(gainsOverAFlight(gain), conditions, Math.ceil(members / 2), SEED + 70 + i).map(
+      (cell) => ({ ...cell, falseAlarm: round(cell.falseAlarm), coverage: round(cell.coverage) }),
+    ),
+  })),
+);
 
 const rules = COMPARED.map((conditions, i) => {
   const unchanged = watchYears(stays, conditions, members, SEED + 100 + i);
@@ -68,7 +80,7 @@ function noticed(years: Parameters<typeof medianWeek>[0], watcher: number, limit
 
 writeFileSync(
   new URL('../src/domain/change/calibration.json', import.meta.url),
-  `${JSON.stringify({ seed: SEED, members, equalYearly: EQUAL_YEARLY, coverage, levels, rules }, null, 2)}\n`,
+  `${JSON.stringify({ seed: SEED, members, equalYearly: EQUAL_YEARLY, constants: CALIBRATED, coverage, levels, sinceLanding, rules }, null, 2)}\n`,
 );
 printTables();
 
@@ -85,6 +97,15 @@ function printTables(): void {
   for (const row of levels) {
     const cells = row.errors.map(({ name, error }) => `${name} ${error.toFixed(2)}`);
     console.log(`${row.conditions.padEnd(12)}${cells.join(' · ')}`);
+  }
+  console.log(
+    '\nSince the landing at week 12, nothing gained after it: false alarms (coverage) 4, 8, 12, 24, 40 weeks on',
+  );
+  for (const row of sinceLanding) {
+    const cells = row.weeks.map((cell) => `${percent(cell.falseAlarm)} (${percent(cell.coverage)})`);
+    console.log(
+      `${`${row.conditions}, gain ${row.gain}`.padEnd(20)}${cells.map((cell) => cell.padStart(16)).join('')}`,
+    );
   }
   for (const table of rules) {
     console.log(

@@ -38,6 +38,33 @@ export function measureCoverage(conditions: Conditions, members: number, seed: n
   }));
 }
 
+/** Weeks after the landing at week 12 at which the change since then is judged. */
+export const WEEKS_SINCE = [4, 8, 12, 24, 40] as const;
+
+/**
+ * Members who rise over the first flight and then hold: the change since the landing at week 12 is nought.
+ * Share called 'really better' and share of intervals that hold the truth, at each of `WEEKS_SINCE`.
+ */
+export function measureSinceLanding(path: Path, conditions: Conditions, members: number, seed: number) {
+  const random = seededRandom(seed);
+  const sums = WEEKS_SINCE.map((weeks) => ({ weeks, alarms: 0, held: 0 }));
+  for (let i = 0; i < members; i += 1) {
+    const member = drawMember(path, conditions, random);
+    for (const sum of sums) {
+      const marks = marksUntil(member.marks, (12 + sum.weeks) * 7 + 2);
+      const judged = judgeChange({ testId: 'sit-ups', better: 'more', marks, since: 12 * 7 });
+      const change = member.levelAt((marks.at(-1)?.atDays ?? 0) / 7) - member.levelAt(12);
+      sum.alarms += Number(judged.verdict === 'really better');
+      sum.held += Number(judged.difference !== null && holds(judged.difference, change));
+    }
+  }
+  return sums.map(({ weeks, alarms, held }) => ({
+    weeks,
+    falseAlarm: alarms / members,
+    coverage: held / members,
+  }));
+}
+
 /** Root mean square error of 'where the member stands now' after 3, 10, 17, … marks, in typical errors, for each way to say it. */
 export function measureLevelErrors(conditions: Conditions, members: number, seed: number) {
   const random = seededRandom(seed);

@@ -25,35 +25,64 @@ export const stays: Path = () => 0;
 
 /** A gain made evenly over twelve weeks, then held. */
 export function gainsOverAFlight(errors: number): Path {
-  return (week) => (errors * Math.min(week, 12)) / 12;
+  return risesBetween(errors, 0, 12);
 }
 
+/** A gain made evenly between two weeks, then held. */
+function risesBetween(errors: number, from: number, to: number): Path {
+  return (week) => errors * Math.min(1, Math.max(0, (week - from) / (to - from)));
+}
+
+/** Each way a year may go, with its share of the practice. Sizes in typical errors. */
+const LIVES: readonly (readonly [share: number, draw: (random: Random) => Path])[] = [
+  [0.25, () => stays],
+  [0.25, levelsOff],
+  [0.2, (random) => risesBetween(2 + 3 * random.uniform(), 0, 4 + 12 * random.uniform())],
+  [0.15, lapses],
+  [0.1, startsLate],
+  [0.05, drifts],
+];
+
 /**
- * A member of an invented practice: three in ten stay the same, four in ten gain and level off, two in ten gain,
- * fall back for some weeks and come back, one in ten drifts. Sizes in typical errors.
+ * A member of an invented practice: a quarter stay the same, a quarter gain and level off slowly, a fifth gain evenly
+ * and stop at once, some lapse and come back, some begin to gain late, a few drift.
  */
 export function drawLife(random: Random): Path {
-  const kind = random.uniform();
-  if (kind < 0.3) return stays;
+  let left = random.uniform();
+  for (const [share, draw] of LIVES) {
+    if (left < share) return draw(random);
+    left -= share;
+  }
+  return stays;
+}
+
+function levelsOff(random: Random): Path {
   const gain = 3 + 1.5 * random.normal();
   const pace = 6 + 12 * random.uniform();
-  const improve: Path = (week) => gain * (1 - Math.exp(-week / pace));
-  if (kind < 0.7) return improve;
-  if (kind < 0.9) {
-    const falls = 6 + 34 * random.uniform();
-    const depth = 1 + 2 * random.uniform();
-    const lasts = 4 + 6 * random.uniform();
-    return (week) =>
-      improve(week) - depth * Math.max(0, 1 - Math.abs(week - falls - lasts / 2) / (lasts / 2));
-  }
+  return (week) => gain * (1 - Math.exp(-week / pace));
+}
+
+function lapses(random: Random): Path {
+  const improve = levelsOff(random);
+  const middle = 8 + 37 * random.uniform();
+  const half = 2 + 3 * random.uniform();
+  const depth = 1 + 2 * random.uniform();
+  return (week) => improve(week) - depth * Math.max(0, 1 - Math.abs(week - middle) / half);
+}
+
+function startsLate(random: Random): Path {
+  const from = 6 + 24 * random.uniform();
+  return risesBetween(2 + 2 * random.uniform(), from, from + 6 + 8 * random.uniform());
+}
+
+function drifts(random: Random): Path {
   const waves = [1, 2, 3].map((n) => ({ size: random.normal() / n, turn: random.uniform(), n }));
-  const wave = (week: number): number =>
+  const at: Path = (week) =>
     waves.reduce(
       (sum, { size, turn, n }) => sum + size * Math.sin(2 * Math.PI * ((n * week) / 60 + turn)),
       0,
     );
-  const start = wave(0);
-  return (week) => wave(week) - start;
+  return (week) => at(week) - at(0);
 }
 
 export interface Conditions {

@@ -1,4 +1,5 @@
 import { filterTrend, makeTrace, smoothTrend, type TrendInput, type TrendState } from './linear-trend.ts';
+import { shrunkErrorVariance } from './typical-error.ts';
 import { student95, studentCdf } from './student-t.ts';
 import { BENDING_MODEL, FREE_MODEL, TREND_MODELS, type WeightedModel } from './trend-models.ts';
 
@@ -27,6 +28,7 @@ export interface Interval {
 }
 
 export interface TrendFit {
+  /** Level at the end week, and what it is above the level at the first mark. */
   readonly level: Interval;
   readonly slopePerWeek: Interval;
   readonly difference: Interval;
@@ -42,9 +44,17 @@ export interface TrendQuestion {
   readonly weeks: readonly number[];
   readonly values: readonly number[];
   readonly priorError: number;
-  readonly learns: boolean;
-  readonly baseWeek: number;
+  /** Repeats made before the first of these; null for a test that cannot be learned. */
+  readonly repeatsBefore: number | null;
   readonly endWeek: number;
+}
+
+interface ModelFit {
+  readonly model: WeightedModel;
+  readonly state: TrendState;
+  readonly trace: Float64Array;
+  readonly errorVariance: number;
+  readonly weight: number;
 }
 
 /**
@@ -54,33 +64,25 @@ export interface TrendQuestion {
  * smallest real change, less the learning. Needs at least one mark and finite numbers.
  */
 export function fitTrend(question: TrendQuestion): TrendFit {
-  const { priorError, learns, values } = question;
+  const { priorError } = question;
+  const repeatsBefore = question.repeatsBefore ?? LEARNING_SHARES.length;
+  const values = Float64Array.from(question.values);
   const count = values.length;
   const spreads = new Float64Array(count).fill(1);
   const input: TrendInput = {
-    weeks: question.weeks,
+    weeks: Float64Array.from(question.weeks),
     values,
     spreads,
-    shares: Float64Array.from({ length: count }, (_, i) => (learns ? (LEARNING_SHARES[i] ?? 0) : 0)),
-    learningMean: learns ? LEARNING_MEAN * priorError : 0,
-    learningVariance: learns ? LEARNING_SD ** 2 : 0,
-    baseWeek: question.baseWeek,
+    shares: Float64Array.from(values, (_, i) => LEARNING_SHARES[i + repeatsBefore] ?? 0),
+    learningMean: LEARNING_MEAN * priorError,
+    learningVariance: LEARNING_SD ** 2,
     endWeek: question.endWeek,
   };
   const outliers = weighOutliers(input, spreads, priorError);
   // Two marks without a believed pace tell nothing of the error.
-  const degrees = PRIOR_REPEATS + (count > 2 ? count - 1 : 0);
-  const models = count === 2 ? [FREE_MODEL] : TREND_MODELS;
-  const fits = models.map((model) => {
-    const trace = makeTrace(count);
-    const state = filterTrend(input, model, trace);
-    const sum = PRIOR_REPEATS * priorError ** 2 + state.sumOfSquares;
-    const score = Math.log(model.belief) - state.logDeterminant / 2 - (degrees / 2) * Math.log(sum);
-    return { model, state, trace, score, errorVariance: sum / degrees };
-  });
-  const best = Math.max(...fits.map((fit) => fit.score));
-  const total = fits.reduce((sum, fit) => sum + Math.exp(fit.score - best), 0);
-  const weighted = fits.map((fit) => ({ ...fit, weight: Math.exp(fit.score - best) / total }));
+  const ownRepeats = count > 2 ? count - 1 : 0;
+  const degrees = PRIOR_REPEATS + ownRepeats;
+  const weighted = fitModels(input, count === 2 ? [FREE_MODEL] : TREND_MODELS, priorError, ownRepeats);
   const t = student95(degrees);
   const average = (pick: (state: TrendState) => readonly [number, number]): Interval =>
     mix(
@@ -102,6 +104,29 @@ export function fitTrend(question: TrendQuestion): TrendFit {
     curve: averageCurve(input, weighted, t),
     outliers,
   };
+}
+
+/** Every model filtered, with its share of belief after the marks: likelihood (σ² integrated out) × belief. */
+function fitModels(
+  input: TrendInput,
+  models: readonly WeightedModel[],
+  priorError: number,
+  ownRepeats: number,
+): ModelFit[] {
+  const fits = models.map((model) => {
+    const trace = makeTrace(input.values.length);
+    const state = filterTrend(input, model, trace);
+    const sumOfSquares = ownRepeats > 0 ? state.sumOfSquares : 0;
+    const errorVariance = shrunkErrorVariance(priorError, PRIOR_REPEATS, sumOfSquares, ownRepeats);
+    const score =
+      Math.log(model.belief) -
+      state.logDeterminant / 2 -
+      ((PRIOR_REPEATS + ownRepeats) / 2) * Math.log(errorVariance);
+    return { model, state, trace, errorVariance, score };
+  });
+  const best = Math.max(...fits.map((fit) => fit.score));
+  const total = fits.reduce((sum, fit) => sum + Math.exp(fit.score - best), 0);
+  return fits.map(({ score, ...fit }) => ({ ...fit, weight: Math.exp(score - best) / total }));
 }
 
 /**
@@ -133,11 +158,7 @@ function robustError(misfits: Float64Array, priorError: number): number {
   return Math.sqrt((PRIOR_REPEATS * priorError ** 2 + weight * own ** 2) / (PRIOR_REPEATS + weight));
 }
 
-function averageCurve(
-  input: TrendInput,
-  fits: readonly { model: WeightedModel; trace: Float64Array; weight: number; errorVariance: number }[],
-  t: number,
-): Interval[] {
+function averageCurve(input: TrendInput, fits: readonly ModelFit[], t: number): Interval[] {
   const count = input.values.length;
   const means = new Float64Array(count);
   const squares = new Float64Array(count);

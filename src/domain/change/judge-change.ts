@@ -1,6 +1,7 @@
+import { BENCHMARKS, type TestId } from '../benchmark/tests.ts';
 import { describeChange } from './change-sentence.ts';
-import { fitTrend, type Interval } from './fit-trend.ts';
-import { priorTypicalError, testErrorOf } from './test-errors.ts';
+import { fitTrend, type Interval, type TrendFit } from './fit-trend.ts';
+import { priorTypicalError, TEST_ERRORS } from './test-errors.ts';
 import { smallestRealChange } from './typical-error.ts';
 
 export type Verdict =
@@ -19,7 +20,7 @@ export interface ChangeMark {
 }
 
 export interface ChangeQuestion {
-  readonly testId: string;
+  readonly testId: TestId;
   /** Whether more or less is better in this test. */
   readonly better: 'more' | 'less';
   readonly marks: readonly ChangeMark[];
@@ -64,7 +65,7 @@ export interface ChangeJudgement {
   readonly otherForms: number;
 }
 
-/** Thrown for a mark that is no number, negative or infinite, or a day that is no number. */
+/** Thrown for a mark that is no number, negative or beyond any test, or a day that is no day. */
 export class ChangeInputError extends Error {
   readonly code = 'change_input';
 }
@@ -74,11 +75,14 @@ export const REAL_CHANCE = 0.975;
 export const PROBABLE_CHANCE = 0.9;
 /** With fewer marks, no change seen means that it is too early to say. */
 export const EARLY_MARKS = 3;
-/** All marks within this many days: always too early. */
+/** Too early when the last mark is within this many days of the comparison. */
 export const EARLY_DAYS = 7;
 /** The curve for the chart has at most this many points. */
 const CURVE_POINTS = 200;
 const DAYS_A_WEEK = 7;
+/** Larger is a mistake of the caller (milliseconds for days, say), and squares of it would lose their digits. */
+const LARGEST_MARK = 1e6;
+const LARGEST_DAY = 1e6;
 
 /**
  * Judges whether a member really changed in a test, since the first mark or since a given day.
@@ -87,10 +91,9 @@ const DAYS_A_WEEK = 7;
  */
 export function judgeChange(question: ChangeQuestion): ChangeJudgement {
   const { marks, otherForms } = usableMarks(question);
-  const test = testErrorOf(question.testId);
   const first = marks[0];
   const last = marks.at(-1);
-  const priorError = priorTypicalError(test, middle(marks.map((mark) => mark.value)));
+  const priorError = priorTypicalError(question.testId, middle(marks.map((mark) => mark.value)));
   if (!first || !last) return { ...NOTHING, ...errors(priorError), sentence: 'No marks yet.', otherForms };
 
   const sign = question.better === 'more' ? 1 : -1;
@@ -98,31 +101,40 @@ export function judgeChange(question: ChangeQuestion): ChangeJudgement {
   const end = marks.length > 2 ? Math.max(question.today ?? last.atDays, last.atDays) : last.atDays;
   const since = Math.min(Math.max(question.since ?? first.atDays, first.atDays), last.atDays);
   const weekOf = (day: number): number => (day - first.atDays) / DAYS_A_WEEK;
-  const fit = fitTrend({
-    weeks: marks.map((mark) => weekOf(mark.atDays)),
-    values: marks.map((mark) => sign * mark.value),
-    priorError,
-    learns: test.learns,
-    baseWeek: weekOf(since),
-    endWeek: weekOf(end),
-  });
+  const { learns } = TEST_ERRORS[question.testId];
+  const fitOf = (used: readonly ChangeMark[], error: number): TrendFit =>
+    fitTrend({
+      weeks: used.map((mark) => weekOf(mark.atDays)),
+      values: used.map((mark) => sign * mark.value),
+      priorError: error,
+      repeatsBefore: learns ? marks.length - used.length : null,
+      endWeek: weekOf(end),
+    });
+  const fit = fitOf(marks, priorError);
   const turn = (interval: Interval, by = 1): Interval => turned(interval, sign * by);
   const beforeMark = marks.findLast((mark) => mark.atDays <= since) ?? first;
-  const level = turn(fit.level);
-  const difference = turn(fit.difference);
-  const verdict = verdictOf(fit.chanceBetter, marks.length, last.atDays - first.atDays);
+  // A steep rise before the comparison must not be carried into it: only the marks from then on are compared.
+  const compared = marks.filter((mark) => mark.atDays >= beforeMark.atDays);
+  const change = compared.length === marks.length ? fit : fitOf(compared, fit.typicalError);
+  const level = atLeastNothing(turn(fit.level));
+  const difference = turn(change.difference);
+  const verdict = verdictOf(change.chanceBetter, compared.length, last.atDays - beforeMark.atDays);
   const judged = {
     verdict,
     level,
     slopePer4Weeks: turn(fit.slopePerWeek, 4),
     ...errors(fit.typicalError),
-    before: { atDays: beforeMark.atDays, mark: beforeMark.value, level: level.value - difference.value },
+    before: {
+      atDays: beforeMark.atDays,
+      mark: beforeMark.value,
+      level: Math.max(0, level.value - difference.value),
+    },
     now: { atDays: last.atDays, mark: last.value, level: level.value },
     difference: { ...difference, marks: last.value - beforeMark.value },
-    chanceBetter: fit.chanceBetter,
+    chanceBetter: change.chanceBetter,
     points: curvePoints(
       marks,
-      fit.curve.map((point) => turn(point)),
+      fit.curve.map((point) => atLeastNothing(turn(point))),
       end,
       level,
     ),
@@ -131,9 +143,9 @@ export function judgeChange(question: ChangeQuestion): ChangeJudgement {
   };
   const sentence = describeChange({
     ...judged,
-    unit: test.unit,
+    unit: BENCHMARKS[question.testId].unit,
     better: question.better,
-    count: marks.length,
+    count: compared.length,
   });
   return { ...judged, sentence };
 }
@@ -170,16 +182,20 @@ function verdictOf(chanceBetter: number, count: number, spanDays: number): Verdi
 /** Sorted marks of the form of the last one. */
 function usableMarks(question: ChangeQuestion): { marks: ChangeMark[]; otherForms: number } {
   for (const day of [question.today, question.since]) {
-    if (day !== undefined && !Number.isFinite(day)) throw new ChangeInputError(`Day ${day} is no number`);
+    if (day !== undefined && !isDay(day)) throw new ChangeInputError(`Day ${day} is no day`);
   }
   for (const { atDays, value } of question.marks) {
-    if (!Number.isFinite(value) || value < 0) throw new ChangeInputError(`Mark ${value} is no result`);
-    if (!Number.isFinite(atDays)) throw new ChangeInputError(`Day ${atDays} is no number`);
+    if (!(value >= 0 && value <= LARGEST_MARK)) throw new ChangeInputError(`Mark ${value} is no result`);
+    if (!isDay(atDays)) throw new ChangeInputError(`Day ${atDays} is no day`);
   }
   const sorted = [...question.marks].sort((a, b) => a.atDays - b.atDays);
   const form = sorted.at(-1)?.form ?? null;
   const marks = sorted.filter((mark) => (mark.form ?? null) === form);
   return { marks, otherForms: sorted.length - marks.length };
+}
+
+function isDay(day: number): boolean {
+  return Math.abs(day) <= LARGEST_DAY;
 }
 
 function turned({ value, low, high }: Interval, by: number): Interval {
@@ -188,9 +204,16 @@ function turned({ value, low, high }: Interval, by: number): Interval {
     : { value: value * by, low: high * by, high: low * by };
 }
 
+/** No result is below nought, so no interval reaches there. */
+function atLeastNothing({ value, low, high }: Interval): Interval {
+  return { value: Math.max(0, value), low: Math.max(0, low), high: Math.max(0, high) };
+}
+
 function middle(values: readonly number[]): number {
   const sorted = [...values].sort((a, b) => a - b);
-  return sorted[sorted.length >> 1] ?? 0;
+  const half = sorted.length >> 1;
+  const upper = sorted[half] ?? 0;
+  return sorted.length % 2 === 1 ? upper : (upper + (sorted[half - 1] ?? upper)) / 2;
 }
 
 function curvePoints(

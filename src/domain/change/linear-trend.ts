@@ -3,7 +3,7 @@
  *
  *   mark  = level − share × learning + error         error    ~ N(0, σ² × spread)
  *   level moves by the slope, and by N(0, σ² × levelVariance × weeks)
- *   slope moves by N(0, σ² × bendVariance × weeks)   slope(0) ~ N(0, σ² × slopeVariance)
+ *   slope bends by N(0, σ² × bendVariance × weeks)   slope(0) ~ N(0, σ² × slopeVariance)
  *
  * The slope may fade (damping, share a week): gains come quickly at first and level off, and after missing weeks
  * nobody is thought to have gone on improving at the old pace. With damping 0 it is the plain local linear trend.
@@ -15,22 +15,25 @@
 export interface TrendModel {
   readonly slopeVariance: number;
   readonly bendVariance: number;
+  /** Added to the bends of the first `EARLY_WEEKS`, when gains come fast and stop soon. */
+  readonly earlyBendVariance: number;
   readonly levelVariance: number;
   readonly damping: number;
 }
 
+/** Bends are wider in this many weeks from the first mark. Common practice, no source. */
+export const EARLY_WEEKS = 8;
+
 export interface TrendInput {
   /** Weeks, not falling. */
-  readonly weeks: ArrayLike<number>;
-  readonly values: ArrayLike<number>;
+  readonly weeks: Float64Array;
+  readonly values: Float64Array;
   /** Error variance of each mark in σ² units: 1, more for a mark that does not fit. */
-  readonly spreads: ArrayLike<number>;
+  readonly spreads: Float64Array;
   /** Share of the learning effect still to come at each mark. */
-  readonly shares: ArrayLike<number>;
+  readonly shares: Float64Array;
   readonly learningMean: number;
   readonly learningVariance: number;
-  /** When the comparison starts; taken as the first mark when earlier. */
-  readonly baseWeek: number;
   /** When the level is wanted; taken as the last mark when earlier. */
   readonly endWeek: number;
 }
@@ -73,18 +76,18 @@ export function makeTrace(marks: number): Float64Array {
 }
 
 /**
- * Kalman filter. The first mark sets the level exactly (diffuse start). A fourth state holds a copy of the level
- * at `baseWeek`, so the variance of the change takes into account that both ends share their marks.
+ * Kalman filter. The first mark sets the level exactly (diffuse start). A fourth state keeps the level at the first
+ * mark, the base, so the variance of the change takes into account that both ends share their marks.
  * O(marks), no allocation but the result.
  */
 export function filterTrend(input: TrendInput, model: TrendModel, trace?: Float64Array): TrendState {
   const { weeks, values, spreads, shares } = input;
-  const { damping, bendVariance, levelVariance } = model;
+  const { damping, levelVariance } = model;
   const count = values.length;
   const firstShare = shares[0] ?? 0;
   const v = input.learningVariance;
   let week = weeks[0] ?? 0;
-  const baseWeek = Math.max(input.baseWeek, week);
+  const earlyUntil = week + EARLY_WEEKS;
   let level = (values[0] ?? 0) + firstShare * input.learningMean;
   let slope = 0;
   let learning = input.learningMean;
@@ -99,44 +102,42 @@ export function filterTrend(input: TrendInput, model: TrendModel, trace?: Float6
   let pSB = pLS;
   let pEB = pLE;
   let pBB = pLL;
-  let isBaseSet = false;
   let logDeterminant = 0;
+  let product = 1;
   let sumOfSquares = 0;
 
   if (trace) {
     trace.set([level, slope, learning, pLL, pLS, pLE, pSS, pSE, pEE], 0);
   }
+  let knownDt = 0;
+  let keep = 1;
+  let reach = 0;
+  let unitNoise = 0;
   let i = 1;
-  // Each turn moves to the next date: a mark, the base week on the way, or the end.
+  // Each turn moves to the next date: a mark, or the end.
   for (;;) {
     const isEnd = i >= count;
     const next = Math.max(week, isEnd ? input.endWeek : (weeks[i] ?? week));
-    const isBaseNext = !isBaseSet && (isEnd || next > baseWeek);
-    const target = isBaseNext ? Math.min(baseWeek, next) : next;
-    const dt = target - week;
+    const dt = next - week;
     if (dt > 0) {
-      const keep = keepOf(damping, dt);
-      const reach = reachOf(damping, dt, keep);
+      // Marks are mostly a week apart: the same step is not worked out twice.
+      if (dt !== knownDt) {
+        keep = keepOf(damping, dt);
+        reach = reachOf(damping, dt, keep);
+        unitNoise = bendNoise(damping, dt, reach);
+        knownDt = dt;
+      }
+      const bendVariance = model.bendVariance + (week < earlyUntil ? model.earlyBendVariance : 0);
       level += reach * slope;
       slope *= keep;
-      pLL +=
-        reach * (2 * pLS + reach * pSS) + levelVariance * dt + bendVariance * bendNoise(damping, dt, reach);
+      pLL += reach * (2 * pLS + reach * pSS) + levelVariance * dt + bendVariance * unitNoise;
       pLS = keep * (pLS + reach * pSS) + (bendVariance * reach * reach) / 2;
       pLE += reach * pSE;
       pLB += reach * pSB;
       pSS = keep * keep * pSS + (bendVariance * reach * (1 + keep)) / 2;
       pSE *= keep;
       pSB *= keep;
-      week = target;
-    }
-    if (isBaseNext) {
-      base = level;
-      pLB = pLL;
-      pSB = pLS;
-      pEB = pLE;
-      pBB = pLL;
-      isBaseSet = true;
-      continue;
+      week = next;
     }
     if (isEnd) break;
     const c = shares[i] ?? 0;
@@ -181,7 +182,11 @@ export function filterTrend(input: TrendInput, model: TrendModel, trace?: Float6
     pSB -= kB * zS;
     pEB -= kB * zE;
     pBB -= kB * zB;
-    logDeterminant += Math.log(variance);
+    product *= variance;
+    if (product > 1e200 || product < 1e-200) {
+      logDeterminant += Math.log(product);
+      product = 1;
+    }
     sumOfSquares += (innovation * innovation) / variance;
     i += 1;
   }
@@ -192,7 +197,7 @@ export function filterTrend(input: TrendInput, model: TrendModel, trace?: Float6
     levelVariance: pLL,
     slopeVariance: pSS,
     differenceVariance: Math.max(0, pLL + pBB - 2 * pLB),
-    logDeterminant,
+    logDeterminant: logDeterminant + Math.log(product),
     sumOfSquares,
   };
 }

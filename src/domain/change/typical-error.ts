@@ -37,35 +37,16 @@ export function smallestWorthwhileChange(sdBetween: number): number {
 }
 
 /**
- * Pools repeats within person: √(Σ squared deviations from each group's own mean ÷ Σ (size − 1)).
- * A group is a set of marks made close enough together that the person did not change.
- * `degrees` says how much evidence there is; `null` when no group has two marks.
+ * A member's error variance from their own repeats, pooled within the person and shrunk to the prior: the mean form of
+ * a scaled inverse chi-square posterior, (repeats × prior² + sum of squares) ÷ (repeats + degrees).
+ * `priorRepeats` says what the prior is worth: with 8, eight own repeats weigh as much.
+ * `sumOfSquares` are squared deviations from what was expected, `degrees` how many of them are free.
  */
-export function pooledWithin(
-  groups: readonly (readonly number[])[],
-): { typicalError: number; degrees: number } | null {
-  let sumOfSquares = 0;
-  let degrees = 0;
-  for (const group of groups) {
-    if (group.length < 2) continue;
-    const mean = group.reduce((sum, v) => sum + v, 0) / group.length;
-    sumOfSquares += group.reduce((sum, v) => sum + (v - mean) ** 2, 0);
-    degrees += group.length - 1;
-  }
-  return degrees === 0 ? null : { typicalError: Math.sqrt(sumOfSquares / degrees), degrees };
-}
-
-/**
- * Shrinks a member's own error to the prior, as the mean of a scaled inverse chi-square posterior:
- * error² = (weight × prior² + degrees × own²) ÷ (weight + degrees). `priorWeight` is in repeats:
- * with 8, the member's own repeats count as much as the prior after eight of them.
- */
-export function shrinkTypicalError(
+export function shrunkErrorVariance(
   prior: number,
-  priorWeight: number,
-  own: { typicalError: number; degrees: number } | null,
+  priorRepeats: number,
+  sumOfSquares: number,
+  degrees: number,
 ): number {
-  if (own === null) return prior;
-  const total = priorWeight * prior ** 2 + own.degrees * own.typicalError ** 2;
-  return Math.sqrt(total / (priorWeight + own.degrees));
+  return (priorRepeats * prior ** 2 + sumOfSquares) / (priorRepeats + degrees);
 }
