@@ -1,4 +1,5 @@
 import { describe, expect, test } from 'vitest';
+import { outside } from '#support/outside';
 import { inputOf } from '#support/trend-input';
 import published from '../../../tests/published/statistics.json' with { type: 'json' };
 import { filterTrend, makeTrace, smoothTrend, type TrendModel } from './linear-trend.ts';
@@ -14,7 +15,9 @@ const STILL: TrendModel = {
   damping: 0,
 };
 
-describe('Nile, local level: Durbin & Koopman 2012, 2.2.5 (retrieved from the tests of StateSpaceModels.jl)', () => {
+const NILE = 'Durbin & Koopman 2012, 2.2.5, in the tests of StateSpaceModels.jl';
+
+describe('Nile, local level', () => {
   const years = nile.values.map((_, i) => i);
   const fitAt = (ratio: number) =>
     filterTrend(inputOf(years, nile.values), { ...STILL, levelVariance: ratio });
@@ -25,6 +28,8 @@ describe('Nile, local level: Durbin & Koopman 2012, 2.2.5 (retrieved from the te
     const variance = state.sumOfSquares / n;
     return -(n * Math.log(2 * Math.PI) + n * Math.log(variance) + state.logDeterminant + n) / 2;
   };
+
+  const errorVarianceAt = (ratio: number): number => fitAt(ratio).sumOfSquares / (nile.values.length - 1);
 
   /** Golden section on the log of the ratio. */
   const best = (): number => {
@@ -38,14 +43,16 @@ describe('Nile, local level: Durbin & Koopman 2012, 2.2.5 (retrieved from the te
     return Math.exp((low + high) / 2);
   };
 
-  test('error variance 15099 and level variance 1469.1 at the greatest likelihood', () => {
-    const ratio = best();
-    const variance = fitAt(ratio).sumOfSquares / (nile.values.length - 1);
-    expect(Math.abs(variance - nile.errorVariance)).toBeLessThan(2);
-    expect(Math.abs(variance * ratio - nile.levelVariance)).toBeLessThan(1);
+  test(outside('error variance 15099 at the greatest likelihood', NILE, 'published'), () => {
+    expect(Math.abs(errorVarianceAt(best()) - nile.errorVariance)).toBeLessThan(2);
   });
 
-  test('log-likelihood -632.5442 with their first level of 0 and variance 1e7, at their variances', () => {
+  test(outside('level variance 1469.1 at the greatest likelihood', NILE, 'published'), () => {
+    const ratio = best();
+    expect(Math.abs(errorVarianceAt(ratio) * ratio - nile.levelVariance)).toBeLessThan(1);
+  });
+
+  test(outside('log-likelihood -632.5442 with a first level of 0, variance 1e7', NILE, 'published'), () => {
     const { errorVariance, levelVariance, firstVariance } = nile;
     // A mark of 0 as wide as their first level stands for it; the first flow's own share is taken out again.
     const spread = firstVariance / errorVariance;
@@ -59,17 +66,18 @@ describe('Nile, local level: Durbin & Koopman 2012, 2.2.5 (retrieved from the te
     expect(logLikelihood).toBeCloseTo(nile.logLikelihood, 4);
   });
 
-  test('log-likelihood -632.5456 with a diffuse start (memory)', () =>
-    expect(logLikelihood(best())).toBeCloseTo(-632.5456, 3));
+  test(outside('log-likelihood -632.5456 with a diffuse start', 'Nile local level', 'memory'), () =>
+    expect(logLikelihood(best())).toBeCloseTo(-632.5456, 3),
+  );
 
-  test('last filtered level 798.37 with variance 4032.2 (memory)', () => {
+  test(outside('last filtered level 798.37 with variance 4032.2', 'Nile local level', 'memory'), () => {
     const state = fitAt(nile.levelVariance / nile.errorVariance);
     expect(state.level).toBeCloseTo(798.37, 1);
     expect(state.levelVariance * nile.errorVariance).toBeCloseTo(4032.2, 0);
   });
 });
 
-test('NIST Norris: a line without noise or belief about its slope is least squares (retrieved)', () => {
+test(outside('a trend without noise or belief is least squares', 'NIST/ITL StRD Norris', 'published'), () => {
   const { x, y, certified } = published.norris;
   const order = x.map((_, i) => i).sort((a, b) => (x[a] ?? 0) - (x[b] ?? 0));
   const weeks = order.map((i) => x[i] ?? 0);

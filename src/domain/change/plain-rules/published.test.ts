@@ -1,6 +1,7 @@
 import fc from 'fast-check';
 import { linearRegression, median, sampleStandardDeviation } from 'simple-statistics';
 import { describe, expect, test } from 'vitest';
+import { byName, outside, type OutsideFlag } from '#support/outside';
 import published from '../../../../tests/published/statistics.json' with { type: 'json' };
 import {
   standardErrorOfMeasurement,
@@ -10,35 +11,64 @@ import {
 import { leastSquares } from './least-squares.ts';
 import { lowess } from './lowess.ts';
 import { mannKendall } from './mann-kendall.ts';
-import { smoothHolt, smoothOnce } from './smoothing.ts';
+import { smoothHolt, smoothOnce, type HoltStep } from './smoothing.ts';
 import { theilSen } from './theil-sen.ts';
 
 const { norris, women, nistSingle, nistDouble, holt, cars } = published;
 
-/** Asserts agreement to a relative tolerance, as certified values are given. */
-function expectNear(actual: number | undefined, expected: number, tolerance: number): void {
-  expect(Math.abs((actual ?? Number.NaN) - expected)).toBeLessThanOrEqual(tolerance * Math.abs(expected));
+/** One outside check: a value of ours, the value printed elsewhere, and how near they must be. */
+interface Check {
+  readonly name: string;
+  readonly actual: number | undefined;
+  readonly expected: number;
+  readonly within: number;
+}
+
+function checkAll(
+  source: string,
+  flag: OutsideFlag,
+  checks: readonly (Omit<Check, 'name'> & { what: string })[],
+) {
+  const named = checks.map(({ what, ...check }) => ({ ...check, name: outside(what, source, flag) }));
+  test.each(byName(named))('%s', (_, { actual, expected, within }) => {
+    expect(Math.abs((actual ?? Number.NaN) - expected)).toBeLessThanOrEqual(within);
+  });
+}
+
+/** The same for a printed column. */
+function checkColumn(
+  what: string,
+  source: string,
+  flag: OutsideFlag,
+  actual: readonly (number | undefined)[],
+  expected: readonly number[],
+  within: number,
+): void {
+  checkAll(
+    source,
+    flag,
+    expected.map((value, i) => ({ what: `${what} ${i + 1}`, actual: actual[i], expected: value, within })),
+  );
 }
 
 describe('least squares', () => {
   const fit = leastSquares(norris.x, norris.y);
+  const { certified } = norris;
+  const near = (value: number, digits: number): number => Math.abs(value) * 10 ** -digits;
+  checkAll('NIST/ITL StRD Norris', 'published', [
+    { what: 'slope', actual: fit?.slope, expected: certified.B1, within: near(certified.B1, 12) },
+    { what: 'intercept', actual: fit?.intercept, expected: certified.B0, within: near(certified.B0, 10) },
+    { what: 'residual SD', actual: fit?.residualSd, expected: certified.residual_sd, within: 1e-10 },
+    { what: 'error of the slope', actual: fit?.slopeError, expected: certified.sd_B1, within: 1e-13 },
+    { what: 'error of the intercept', actual: fit?.interceptError, expected: certified.sd_B0, within: 1e-10 },
+  ]);
 
-  test.each([
-    ['slope', fit?.slope, norris.certified.B1, 1e-12],
-    ['intercept', fit?.intercept, norris.certified.B0, 1e-10],
-    ['residual SD', fit?.residualSd, norris.certified.residual_sd, 1e-10],
-    ['error of the slope', fit?.slopeError, norris.certified.sd_B1, 1e-10],
-    ['error of the intercept', fit?.interceptError, norris.certified.sd_B0, 1e-10],
-  ])('NIST StRD Norris: %s (retrieved)', (_, actual, expected, tolerance) => {
-    expectNear(actual, expected, tolerance);
-  });
-
-  test('R 4.2.2 lm(women): slope, intercept, sigma (computed with R)', () => {
-    const line = leastSquares(women.x, women.y);
-    expect(line?.slope).toBeCloseTo(women.slope, 8);
-    expect(line?.intercept).toBeCloseTo(women.intercept, 7);
-    expect(line?.residualSd).toBeCloseTo(women.sigma, 8);
-  });
+  const line = leastSquares(women.x, women.y);
+  checkAll(women.source, 'derived', [
+    { what: 'slope', actual: line?.slope, expected: women.slope, within: 1e-8 },
+    { what: 'intercept', actual: line?.intercept, expected: women.intercept, within: 1e-8 },
+    { what: 'residual SD', actual: line?.residualSd, expected: women.sigma, within: 1e-9 },
+  ]);
 
   test('has no answer for two points or one x', () => {
     expect(leastSquares([1, 2], [3, 4])).toBeNull();
@@ -46,95 +76,124 @@ describe('least squares', () => {
   });
 });
 
-describe.each(published.trends)('$source (retrieved)', (example) => {
-  test(`Mann-Kendall S is ${example.S}`, () => expect(mannKendall(example.y).s).toBe(example.S));
-  test('Theil-Sen slope', () =>
-    expect(theilSen(example.x, example.y)?.slope).toBeCloseTo(example.sen_slope, 6));
-});
-
-describe.each(published.trends.flatMap((example) => ('z' in example ? [example] : [])))(
-  '$source, the rest (retrieved)',
-  (example) => {
+describe('Mann-Kendall and Theil-Sen', () => {
+  for (const example of published.trends) {
     const kendall = mannKendall(example.y);
     const sen = theilSen(example.x, example.y);
-
-    test.each([
-      ['variance of S', kendall.variance, example.varS, 6],
-      ['z', kendall.z, example.z, 6],
-      ['p', kendall.p, example.p, 6],
-      ['tau', kendall.tau, example.tau, 6],
-      ['intercept (Conover)', sen?.intercept, example.intercept_conover, 6],
-      ['lower limit (Gilbert)', sen?.low, example.ci95_gilbert?.[0], 3],
-      ['upper limit (Gilbert)', sen?.high, example.ci95_gilbert?.[1], 3],
-    ])('%s', (_, actual, expected, digits) => {
-      expect(expected).toBeDefined();
-      expect(actual).toBeCloseTo(expected ?? Number.NaN, digits);
-    });
-  },
-);
+    checkAll(example.source, 'published', [
+      { what: 'Mann-Kendall S', actual: kendall.s, expected: example.S, within: 0 },
+      { what: 'Theil-Sen slope', actual: sen?.slope, expected: example.sen_slope, within: 1e-6 },
+    ]);
+    if (!('z' in example) || !example.ci95_gilbert) continue;
+    const [low, high] = example.ci95_gilbert;
+    checkAll(example.source, 'published', [
+      { what: 'variance of S', actual: kendall.variance, expected: example.varS ?? Number.NaN, within: 1e-6 },
+      { what: 'z', actual: kendall.z, expected: example.z ?? Number.NaN, within: 1e-6 },
+      { what: 'p', actual: kendall.p, expected: example.p ?? Number.NaN, within: 1e-6 },
+      { what: 'tau', actual: kendall.tau, expected: example.tau ?? Number.NaN, within: 1e-6 },
+      {
+        what: 'intercept after Conover',
+        actual: sen?.intercept,
+        expected: example.intercept_conover ?? Number.NaN,
+        within: 1e-6,
+      },
+      { what: 'lower limit after Gilbert', actual: sen?.low, expected: low ?? Number.NaN, within: 5e-4 },
+      { what: 'upper limit after Gilbert', actual: sen?.high, expected: high ?? Number.NaN, within: 5e-4 },
+    ]);
+  }
+});
 
 describe('smoothing', () => {
-  test('NIST e-Handbook 6.4.3.1: single smoothing, forecasts and mean square error (recomputed)', () => {
-    const forecasts = smoothOnce(nistSingle.y, nistSingle.alpha);
-    forecasts.forEach((value, i) => expect(value).toBeCloseTo(nistSingle.oneStep[i] ?? 0, 3));
-    const squares = forecasts.map((value, i) => (value - (nistSingle.y[i + 1] ?? 0)) ** 2);
-    expect(squares.reduce((sum, s) => sum + s, 0) / squares.length).toBeCloseTo(
-      nistSingle.meanSquareError,
-      3,
-    );
-  });
+  const single = smoothOnce(nistSingle.y, nistSingle.alpha);
+  const squares = single.map((value, i) => (value - (nistSingle.y[i + 1] ?? 0)) ** 2);
+  const meanSquare = squares.reduce((sum, s) => sum + s, 0) / squares.length;
+  checkColumn('single smoothing, forecast', nistSingle.source, 'derived', single, nistSingle.oneStep, 5e-4);
+  checkAll(nistSingle.source, 'derived', [
+    { what: 'mean square error', actual: meanSquare, expected: nistSingle.meanSquareError, within: 5e-4 },
+  ]);
 
-  test('NIST e-Handbook 6.4.3.4: double smoothing, forecasts from the fifth on (retrieved)', () => {
-    const { alpha, gamma, level, trend } = nistDouble;
-    const steps = smoothHolt(nistDouble.y.slice(1), alpha, gamma, { level, trend });
-    nistDouble.oneStepFromSecond.forEach((value, i) => expect(steps[i]?.forecast).toBeCloseTo(value, 3));
-    nistDouble.publishedFromFifth.forEach((value, i) =>
-      expect(Math.round((steps[i + 3]?.forecast ?? 0) * 10) / 10).toBe(value),
-    );
-    const last = steps.at(-1);
-    expect((last?.level ?? 0) + (last?.trend ?? 0)).toBeCloseTo(nistDouble.next, 3);
-  });
+  const { level, trend } = nistDouble;
+  const double = smoothHolt(nistDouble.y.slice(1), nistDouble.alpha, nistDouble.gamma, { level, trend });
+  const printed = double.slice(3).map((step) => step.forecast);
+  checkColumn(
+    'double smoothing, forecast',
+    nistDouble.source,
+    'published',
+    printed,
+    nistDouble.publishedFromFifth,
+    0.05,
+  );
 
-  test('Hyndman & Athanasopoulos, FPP1 Table 7.3: Holt fitted, level, trend, forecasts (retrieved)', () => {
-    const steps = smoothHolt(holt.y, holt.alpha, holt.beta, { level: holt.level0, trend: holt.trend0 });
-    steps.forEach((step, i) => {
-      expect(Math.abs(step.forecast - (holt.fitted[i] ?? 0))).toBeLessThanOrEqual(holt.tolerance);
-      expect(Math.abs(step.level - (holt.level[i] ?? 0))).toBeLessThanOrEqual(holt.tolerance);
-      expect(Math.abs(step.trend - (holt.trend[i] ?? 0))).toBeLessThanOrEqual(holt.tolerance);
-    });
-    const last = steps.at(-1);
-    holt.forecast.forEach((value, i) => {
-      const forecast = (last?.level ?? 0) + (i + 1) * (last?.trend ?? 0);
-      expect(Math.abs(forecast - value)).toBeLessThanOrEqual(holt.tolerance);
-    });
-  });
+  const steps = smoothHolt(holt.y, holt.alpha, holt.beta, { level: holt.level0, trend: holt.trend0 });
+  const column = (pick: (step: HoltStep) => number): number[] => steps.map(pick);
+  const last = steps.at(-1) ?? { level: 0, trend: 0 };
+  const ahead = [1, 2, 3, 4, 5].map((periods) => last.level + periods * last.trend);
+  const within = holt.tolerance;
+  checkColumn(
+    'Holt, fitted',
+    holt.source,
+    'published',
+    column((step) => step.forecast),
+    holt.fitted,
+    within,
+  );
+  checkColumn(
+    'Holt, level',
+    holt.source,
+    'published',
+    column((step) => step.level),
+    holt.level,
+    within,
+  );
+  checkColumn(
+    'Holt, trend',
+    holt.source,
+    'published',
+    column((step) => step.trend),
+    holt.trend,
+    within,
+  );
+  checkColumn('Holt, forecast', holt.source, 'published', ahead, holt.forecast, within);
 
-  test('R 4.2.2 lowess(cars): the first ten and the last (computed with R)', () => {
-    const curve = lowess(cars.speed, cars.dist);
-    cars.first10.forEach((value, i) => expect(curve[i]).toBeCloseTo(value, 6));
-    expect(curve.at(-1)).toBeCloseTo(cars.last, 6);
-  });
+  const curve = lowess(cars.speed, cars.dist);
+  checkColumn('lowess, fitted', cars.source, 'derived', curve, cars.first10, 1e-6);
+  checkAll(cars.source, 'derived', [
+    { what: 'lowess, last fitted', actual: curve.at(-1), expected: cars.last, within: 1e-6 },
+  ]);
 });
 
 describe('checks of the reference', () => {
-  test('typical error of five retest pairs, Hopkins 2000 (constructed)', () => {
-    const pairs = [
-      [20, 22],
-      [25, 24],
-      [18, 21],
-      [30, 31],
-      [22, 22],
-    ] as const;
-    expect(typicalErrorFromPairs(pairs)).toBeCloseTo(1.118033988749895, 12);
-  });
-
-  test('SEM of push-ups from SD 10 and ICC 0.97, Weir 2005 (constructed; form from memory)', () => {
-    expect(standardErrorOfMeasurement(10, 0.97)).toBeCloseTo(1.7320508075688772, 12);
-  });
-
-  test('smallest worthwhile change of SD 9, Hopkins 2000', () => {
-    expect(smallestWorthwhileChange(9)).toBeCloseTo(1.8, 12);
-  });
+  const pairs = [
+    [20, 22],
+    [25, 24],
+    [18, 21],
+    [30, 31],
+    [22, 22],
+  ] as const;
+  checkAll('Hopkins 2000, five constructed pairs', 'derived', [
+    {
+      what: 'typical error from retests',
+      actual: typicalErrorFromPairs(pairs) ?? undefined,
+      expected: 1.118033988749895,
+      within: 1e-12,
+    },
+  ]);
+  checkAll('Weir 2005, with the ICC of PMC8701670', 'memory', [
+    {
+      what: 'SEM of SD 10 and ICC 0.97',
+      actual: standardErrorOfMeasurement(10, 0.97),
+      expected: 1.7320508075688772,
+      within: 1e-12,
+    },
+  ]);
+  checkAll('Hopkins 2000', 'published', [
+    {
+      what: 'smallest worthwhile change of SD 9',
+      actual: smallestWorthwhileChange(9),
+      expected: 1.8,
+      within: 1e-9,
+    },
+  ]);
 });
 
 describe('against simple-statistics on random input', () => {
