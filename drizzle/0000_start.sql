@@ -76,7 +76,7 @@ CREATE TABLE "plans" (
 	"summary" text NOT NULL,
 	"interval" text NOT NULL,
 	"amount_minor" integer NOT NULL,
-	"currency" text DEFAULT 'eur' NOT NULL,
+	"currency" text DEFAULT 'gbp' NOT NULL,
 	"trial_days" smallint DEFAULT 0 NOT NULL,
 	"stripe_product_id" text,
 	"stripe_price_id" text,

@@ -23,7 +23,7 @@ export const plans = pgTable(
     summary: text().notNull(),
     interval: text({ enum: ['month', 'year'] }).notNull(),
     amountMinor: integer().notNull(),
-    currency: text().notNull().default('eur'),
+    currency: text().notNull().default('gbp'),
     trialDays: smallint().notNull().default(0),
     stripeProductId: text(),
     stripePriceId: text().unique(),
