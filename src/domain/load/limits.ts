@@ -13,6 +13,8 @@ export const LIMITS = {
   upsNeeded: 2,
   /** The largest rise of a set's amount in one step, per cent; one unit where that is more. */
   risePercent: 10,
+  /** The largest rise of a set's effort when the rung changes, per cent. */
+  rungRisePercent: 20,
   /** The largest fall in one step under the `down` rule, per cent of a set's amount. */
   dropPercent: 20,
   /** Effort this much above what was asked eases the target and stops a rise. */
