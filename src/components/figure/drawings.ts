@@ -1,0 +1,121 @@
+import type { BodyName } from '#domain/figure/bodies';
+import { drawFigure } from '#domain/figure/draw-figure';
+import { faultJoint } from '#domain/figure/fault-joint';
+import { movementOf } from '#domain/figure/movements';
+import { solveMovement } from '#domain/figure/pose-of';
+import type { Fault, Movement, ViewName } from '#domain/figure/types';
+import { viewOf } from '#domain/figure/view';
+import { jointWindow, windowOf, type Window } from '#domain/figure/window';
+
+/** full: a lesson's drawing. thumb: under 130 px, without shading and with thick lines. */
+export type FigureSize = 'full' | 'thumb';
+
+export interface FigureLook {
+  body?: BodyName | undefined;
+  view?: ViewName | undefined;
+  size?: FigureSize | undefined;
+  /** Muscles to hatch instead of shading, at most three. */
+  muscles?: readonly string[] | undefined;
+  className?: string | undefined;
+}
+
+const THUMB_WEIGHT = 2.4;
+
+/**
+ * Drawings by what they show. The same question always has the same answer and the questions are few (movements,
+ * phases, bodies), so each is worked out once a process instead of 20 ms a request.
+ */
+const drawn = new Map<string, string>();
+
+function once(key: unknown, make: () => string): string {
+  const name = JSON.stringify(key);
+  const known = drawn.get(name);
+  if (known !== undefined) return known;
+  const made = make();
+  drawn.set(name, made);
+  return made;
+}
+
+const looks = (size: FigureSize = 'full') =>
+  size === 'thumb' ? { isHatched: false, weight: THUMB_WEIGHT } : {};
+
+function windowFor(
+  movement: Movement,
+  whichs: readonly (number | Fault)[],
+  body: BodyName,
+  view: ViewName,
+): Window {
+  return jointWindow(whichs.map((which) => windowOf(solveMovement(movement, which, body), viewOf(view))));
+}
+
+/** One phase (0, 1 or 2) of a movement as SVG. */
+export function drawPhase(id: string, phase: number, look: FigureLook = {}): string {
+  return once(['phase', id, phase, look], () => {
+    const movement = movementOf(id);
+    const { body = 'even', view = movement.view, size, muscles, className } = look;
+    const title = `${movement.name}: ${movement.phases[phase]?.name ?? ''}`;
+    return drawFigure(solveMovement(movement, phase, body), {
+      title,
+      view,
+      muscles,
+      className,
+      ...looks(size),
+    });
+  });
+}
+
+export interface DrawnPhase {
+  name: string;
+  cue: string;
+  svg: string;
+}
+
+/** The three phases on one floor at one scale. */
+export function drawPhases(id: string, { body = 'even', view, muscles }: FigureLook = {}): DrawnPhase[] {
+  const movement = movementOf(id);
+  const seen = view ?? movement.view;
+  let shared: Window | undefined;
+  return movement.phases.map(({ name, cue }, phase) => {
+    const svg = once(['phases', id, phase, body, seen, muscles], () => {
+      shared ??= windowFor(movement, [0, 1, 2], body, seen);
+      const title = `${movement.name}, phase ${phase + 1}: ${name}`;
+      return drawFigure(solveMovement(movement, phase, body), {
+        title,
+        view: seen,
+        window: shared,
+        muscles,
+        className: 'w-full',
+      });
+    });
+    return { name, cue, svg };
+  });
+}
+
+/** The words of a fault of a movement. @throws RangeError for a name that the movement does not have */
+export function faultOf(id: string, name: string): Fault {
+  const found = movementOf(id).faults.find((fault) => fault.name === name);
+  if (!found) throw new RangeError(`${id} has no fault called ${name}`);
+  return found;
+}
+
+/** A fault with its joint marked, and its mend with the line from ear to ankle, at one scale. */
+export function drawFault(
+  id: string,
+  name: string,
+  body: BodyName = 'even',
+): { wrong: string; mended: string } {
+  const movement = movementOf(id);
+  const fault = faultOf(id, name);
+  const view = fault.view ?? movement.view;
+  const draw = (isWrong: boolean) =>
+    once(['fault', id, name, body, isWrong], () => {
+      const wrong = solveMovement(movement, fault, body);
+      const mended = solveMovement(movement, fault.mendPhase, body);
+      const window = windowFor(movement, [fault, fault.mendPhase], body, view);
+      const shared = { view, window, isHatched: true, className: 'w-full' };
+      return isWrong
+        ? drawFigure(wrong, { ...shared, title: `Fault: ${name}`, faultAt: faultJoint(fault, wrong, mended) })
+        : drawFigure(mended, { ...shared, title: `Mended: not ${name}`, hasLine: view === 'side' });
+    });
+  return { wrong: draw(true), mended: draw(false) };
+}
