@@ -101,7 +101,7 @@ export const STAIR_RUNGS = [
     needs: ['stairs'],
   }),
   rung('stairs-step-up-knee', 'Step-up with knee drive', 'No push from the lower foot. Reps a side.', {
-    costPerUnit: 0.3,
+    costPerUnit: 0.5,
     needs: ['stairs'],
   }),
   rung('stairs-two', 'Two stairs at a time', 'Hands off the knees; walk down one at a time.', {
