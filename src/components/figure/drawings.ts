@@ -1,6 +1,5 @@
 import type { BodyName } from '#domain/figure/bodies';
 import { drawFigure } from '#domain/figure/draw-figure';
-import { faultJoint } from '#domain/figure/fault-joint';
 import { movementOf } from '#domain/figure/movements';
 import { solveMovement } from '#domain/figure/pose-of';
 import type { Fault, Movement, ViewName } from '#domain/figure/types';
@@ -20,6 +19,8 @@ export interface FigureLook {
 }
 
 const THUMB_WEIGHT = 2.4;
+/** Ladders where ear, hip and ankle are one line when it is right. */
+const STRAIGHT: ReadonlySet<string> = new Set(['push-up', 'plank']);
 
 /**
  * Drawings by what they show. The same question always has the same answer and the questions are few (movements,
@@ -109,13 +110,19 @@ export function drawFault(
   const view = fault.view ?? movement.view;
   const draw = (isWrong: boolean) =>
     once(['fault', id, name, body, isWrong], () => {
-      const wrong = solveMovement(movement, fault, body);
-      const mended = solveMovement(movement, fault.mendPhase, body);
       const window = windowFor(movement, [fault, fault.mendPhase], body, view);
       const shared = { view, window, isHatched: true, className: 'w-full' };
       return isWrong
-        ? drawFigure(wrong, { ...shared, title: `Fault: ${name}`, faultAt: faultJoint(fault, wrong, mended) })
-        : drawFigure(mended, { ...shared, title: `Mended: not ${name}`, hasLine: view === 'side' });
+        ? drawFigure(solveMovement(movement, fault, body), {
+            ...shared,
+            title: `Fault: ${name}`,
+            faultAt: fault.at,
+          })
+        : drawFigure(solveMovement(movement, fault.mendPhase, body), {
+            ...shared,
+            title: `Mended: not ${name}`,
+            hasLine: STRAIGHT.has(movement.ladder) && view === 'side',
+          });
     });
   return { wrong: draw(true), mended: draw(false) };
 }

@@ -52,6 +52,7 @@ const pose = z.strictObject({
   view: view.optional(),
 });
 const words = z.string().min(8);
+const JOINTS = Object.keys(solveMovement(movementOf('march'), 0).J) as Joint[];
 const Movements = z.array(
   z.strictObject({
     id: z.string().regex(/^[a-z0-9-]+$/),
@@ -89,6 +90,7 @@ const Movements = z.array(
           mend: words,
           base: z.int().min(0).max(2),
           mendPhase: z.int().min(0).max(2),
+          at: z.enum(JOINTS as [Joint, ...Joint[]]),
           view: view.optional(),
           pose: pose.partial(),
         }),

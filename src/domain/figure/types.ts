@@ -112,6 +112,8 @@ export interface Fault {
   readonly mend: string;
   readonly base: number;
   readonly mendPhase: number;
+  /** The joint that is marked on the drawing. */
+  readonly at: Joint;
   readonly view?: ViewName | undefined;
   readonly pose: Partial<Pose>;
 }
