@@ -1,4 +1,4 @@
-import { rungOf, rungsFor, type Kit, type MovementId, type Rung } from '../movement/ladders.ts';
+import { LADDERS, rungOf, rungsFor, type Kit, type MovementId, type Rung } from '../movement/ladders.ts';
 import { formatNumber } from '../numbers/format.ts';
 import { EMPHASES, GENTLE_EFFORT } from './limits.ts';
 import type { Decision, Emphasis } from './types.ts';
@@ -89,15 +89,17 @@ function firstShare({ emphasis, gentle, ageYears }: FirstTargetInput): number {
 
 const rangeOf = (rung: Rung, emphasis: Emphasis) => EMPHASES[emphasis].range[rung.unit];
 
-/** The hardest rung, no harder than the tested one, on which the share still makes a full set; else the easiest. */
+/** The hardest rung, no higher on the ladder than the tested one, on which the share still makes a full set; else the easiest. */
 function rungForShare(
   rungs: readonly [Rung, ...Rung[]],
   costAsked: number,
-  testedCost: number,
-  emphasis: Emphasis,
+  { movement, emphasis }: FirstTargetInput,
+  testedRung: string,
 ): Rung {
+  const ladder = LADDERS[movement].rungs;
+  const reach = ladder.slice(0, ladder.findIndex(({ id }) => id === testedRung) + 1);
   const fits = (rung: Rung) =>
-    rung.costPerUnit <= testedCost && costAsked / rung.costPerUnit >= rangeOf(rung, emphasis)[0];
+    reach.includes(rung) && costAsked / rung.costPerUnit >= rangeOf(rung, emphasis)[0];
   return rungs.findLast(fits) ?? rungs[0];
 }
 
@@ -135,9 +137,8 @@ export function firstTarget(input: FirstTargetInput): Decision {
     );
   }
   const share = firstShare(input);
-  const testedCost = rungOf(tested.rung).costPerUnit;
-  const costAsked = tested.maximum * testedCost * share;
-  const rung = rungForShare(rungs, costAsked, testedCost, emphasis);
+  const costAsked = tested.maximum * rungOf(tested.rung).costPerUnit * share;
+  const rung = rungForShare(rungs, costAsked, input, tested.rung);
   const [low, high] = rangeOf(rung, emphasis);
   const amount = Math.min(high, Math.max(low, Math.floor(costAsked / rung.costPerUnit)));
   return decide(

@@ -91,12 +91,13 @@ function setback(facts: StepFacts, earned: number): Step | null {
   return { rule: 'gap', to, effortLess: 0, because: `${daysSinceLast} days since the last time` };
 }
 
-/** Twice running above the mark, both at no more than this amount asked, and neither too hard. */
-function hasEarnedRise([last, before]: readonly Done[]): boolean {
-  if (last === undefined || before === undefined || !isUsable(before)) return false;
-  // A result on a smaller target does not count twice: one rise needs two results of its own.
-  const isSameAsked = before.askedTotal >= last.askedTotal;
-  return isSameAsked && [last, before].every((done) => isAbove(done) && !isTooHard(done));
+/** As many results running as it takes: each above the mark, none too hard, and each asked at the present amount. */
+function hasEarnedRise(history: readonly Done[]): boolean {
+  const recent = history.slice(0, LIMITS.upsNeeded);
+  // A result on a smaller target does not count again: every rise needs results of its own.
+  const isAskedAlike = recent.every((done) => done.askedTotal >= (recent[0]?.askedTotal ?? 0));
+  const isEarned = recent.every((done) => isUsable(done) && isAbove(done) && !isTooHard(done));
+  return recent.length === LIMITS.upsNeeded && isAskedAlike && isEarned;
 }
 
 function rise({ place, history, emphasis, kit }: StepFacts): Step | null {
