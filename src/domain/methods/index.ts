@@ -1,6 +1,8 @@
 import { AEROBIC_METHODS } from '../aerobic/method.ts';
 import { BODY_METHODS } from '../body/method.ts';
+import { LOAD_METHODS } from '../load/method.ts';
 import { PULSE_METHODS } from '../pulse/method.ts';
+import { READINESS_METHODS } from '../readiness/method.ts';
 import { STAIRS_METHODS } from '../stairs/method.ts';
 import { STANDING_METHODS } from '../standing/method.ts';
 import type { MethodEntry } from './types.ts';
@@ -15,6 +17,8 @@ export const METHODS: readonly MethodEntry[] = [
   ...AEROBIC_METHODS,
   ...PULSE_METHODS,
   ...BODY_METHODS,
+  ...LOAD_METHODS,
+  ...READINESS_METHODS,
 ];
 
 /** The entry of a methods page; null when there is no such page. */
