@@ -122,6 +122,7 @@ describe('parseDuration', () => {
     ['3:05 min', 185],
     ['0:45', 45],
     ['90:00', 5400],
+    ['999:59', 59_999],
     ['1:02:03', 3723],
     ['3:05.4', 185],
     ['3:05,6', 186],
@@ -161,6 +162,7 @@ describe('parseDuration', () => {
     ['soon', /like 3:05/],
     ['min', /like 3:05/],
     ['3:05:', /like 3:05/],
+    ['1000:00', /like 3:05/],
     ['500 h', /four days/],
   ])('refuses %j', (typed, reason) => {
     expect(parseDuration(typed)).toEqual({ ok: false, reason: expect.stringMatching(reason) });

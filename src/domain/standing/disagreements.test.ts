@@ -77,4 +77,14 @@ describe('tables that disagree', () => {
     expect(friend?.flag).toBe('memory');
     expect(placed({ ...woman, ageYears: 57, test: 'vo2max', value: 40 }).disagreements).toEqual([]);
   });
+
+  it('sets the class of the VO2max beside the run when the two point apart', () => {
+    const run = (value: number) => placed({ sex: 'male', ageYears: 35, test: 'run-1-5-mile', value });
+    // 13:30 is below the middle of the candidates, and 39.3 mL/kg/min is the middle class.
+    expect(run(810).disagreements[0]?.sentence).toBe(
+      'Turned into VO2max (39.3 mL/kg/min) the classes call it ‘fair’.',
+    );
+    expect(run(650).disagreements).toEqual([]);
+    expect(run(650).vo2max).toBeCloseTo(48.08, 2);
+  });
 });

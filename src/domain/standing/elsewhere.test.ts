@@ -1,9 +1,19 @@
-import { outside } from '#support/outside';
-import { placed } from '#support/standing';
+import { byName, outside } from '#support/outside';
+import { ageIn, placed, SEXES } from '#support/standing';
 import { describe, expect, it } from 'vitest';
+import police from '../../../tests/published/gov-police-cutoffs.json' with { type: 'json' };
+import navy from '../../../tests/published/navy-prt-20-24.json' with { type: 'json' };
+import airForce from '../../../tests/published/usaf-afi36-2905-2010.json' with { type: 'json' };
 import run2022 from '../../../tests/published/usaf-2022-run-male-under25.json' with { type: 'json' };
 import marines from '../../../tests/published/usmc-pft-pullups.json' with { type: 'json' };
-import { airForceRunPoints2022, marinesSay } from './elsewhere.ts';
+import {
+  airForceLine2010,
+  airForceRunPoints2022,
+  airForceSays,
+  marinesSay,
+  navyLevel,
+  pennsylvaniaLine,
+} from './elsewhere.ts';
 import { standingOf } from './standing-of.ts';
 import type { StandingQuery } from './types.ts';
 
@@ -69,5 +79,84 @@ describe('scales of other populations', () => {
     expect(airForceRunPoints2022(740, 'female', 22)).toBeNull();
     expect(airForceRunPoints2022(740, 'male', 25)).toBeNull();
     expect(airForceRunPoints2022(1200, 'male', 22)).toBe(0);
+  });
+
+  const [pennsylvania] = police.sets;
+  const lines = SEXES.flatMap((sex) =>
+    (pennsylvania?.ages ?? []).map((band, i) => {
+      const row = pennsylvania?.[sex];
+      const [minutes = NaN, rest = NaN] = (row?.run_1_5mi[i] ?? '').split(':').map(Number);
+      const name = outside(`Pennsylvania, ${sex} ${band}`, 'Pennsylvania MPOETC', 'published');
+      return {
+        name,
+        sex,
+        band,
+        expected: [row?.situps_1min[i], row?.pushups_1min?.[i], minutes * 60 + rest],
+      };
+    }),
+  );
+  it.each(byName(lines))('%s', (_, { sex, band, expected }) => {
+    const events = ['sit-ups', 'push-ups', 'run-1-5-mile'] as const;
+    expect(events.map((event) => pennsylvaniaLine(event, sex, ageIn(band)))).toEqual(expected);
+  });
+
+  const levels = navy.levels.map((level) => {
+    const [word, points] = [
+      level.slice(0, level.lastIndexOf(' ')).replace('Med', 'Medium'),
+      Number(level.split(' ').at(-1)),
+    ];
+    return {
+      name: outside(`${points} points are ${word}`, 'US Navy, point levels', 'published'),
+      word,
+      points,
+    };
+  });
+  it.each(byName(levels))('%s', (_, { word, points }) => {
+    expect(navyLevel([points])?.level).toBe(word);
+    expect(navyLevel([points - 0.1])?.level).not.toBe(word);
+  });
+
+  it(outside('85, 65 and 55 points: Good Medium', 'US Navy worked example', 'published'), () => {
+    expect(navyLevel([85, 65, 55])?.level).toBe('Good Medium');
+    expect(navyLevel([20])?.level).toBe('Below the scale');
+    for (const nonsense of [[], [NaN], [-1], [101]]) expect(navyLevel(nonsense)).toBeNull();
+  });
+
+  const anchors = SEXES.flatMap((sex) =>
+    (
+      [
+        ['push-ups', 'pushups', 'pushup_min', 'pushup_max'],
+        ['sit-ups', 'situps', 'situp_min', 'situp_max'],
+      ] as const
+    ).map(([event, key, min, max]) => {
+      const cells: Record<string, number> = airForce[`${sex}_under_30`][key];
+      const quarters = Number(Object.entries(cells).find(([, points]) => points === 7.5)?.[0]);
+      const ends = airForce.min_and_max_by_age[sex];
+      const name = outside(
+        `Air Force, ${sex} under 30, ${event}: pass, three quarters, full`,
+        'AFI 36-2905, lines read',
+        'published',
+      );
+      return { name, sex, event, cells, pass: ends[min][0] ?? NaN, quarters, full: ends[max][0] ?? NaN };
+    }),
+  );
+  it.each(byName(anchors))('%s', (_, { sex, event, cells, pass, quarters, full }) => {
+    const at = (count: number) => airForceLine2010(event, count, sex, 29);
+    expect(at(pass - 1)).toBeNull();
+    for (const reps of [pass, quarters, full]) expect(at(reps)).toMatchObject({ reps, points: cells[reps] });
+    expect(at(quarters - 1)?.reps).toBe(pass);
+    expect(at(full - 1)?.reps).toBe(quarters);
+    expect(airForceLine2010(event, full, sex, 30)).toBeNull();
+    expect(airForceSays(event, pass, sex, 29)).toBe(
+      `The US Air Force (2010 to 2021, under 30) called ${pass} in a minute a pass.`,
+    );
+  });
+
+  it('says from memory where the Marines’ two papers differ', () => {
+    expect(marinesSay('male', 45)).not.toContain('memory');
+    expect(marinesSay('male', 46)).toContain('memory');
+    expect(marinesSay('male', 16)).toBeNull();
+    expect(refused({ sex: null, ageYears: 30, test: 'pull-ups', value: 8 }).elsewhere).toEqual([]);
+    expect(refused({ sex: 'male', ageYears: 17, test: 'pull-ups', value: 8 }).elsewhere).toEqual([]);
   });
 });

@@ -3,6 +3,7 @@ import { ageIn, PEOPLE, placed, SEXES } from '#support/standing';
 import { describe, expect, it } from 'vitest';
 import pushUpsMinute from '../../../tests/published/pushup-1min-cooper.json' with { type: 'json' };
 import sitUps from '../../../tests/published/situp-1min-cooper.json' with { type: 'json' };
+import { COOPER_PERCENTILES, PUSH_UP_CELLS, SIT_UP_CELLS } from './tables/cooper-minute.ts';
 import type { Sex, StandingQuery } from './types.ts';
 
 const place = (query: Omit<StandingQuery, 'sex' | 'ageYears'>, sex: Sex, ageYears: number) =>
@@ -96,5 +97,38 @@ describe('push-ups in one minute', () => {
     expect(at(median)).toEqual({ value: 50 });
     expect(at(median - 1)).toEqual({ below: 50 });
     expect(at(median + 1)).toEqual({ above: 50 });
+  });
+});
+
+// A cell that a straight line between its neighbours would give too is only caught here.
+describe('the tables as they are written down', () => {
+  it.each([
+    ['sit-ups', SIT_UP_CELLS, sitUps.table],
+    ['push-ups', PUSH_UP_CELLS, pushUpsMinute.table],
+  ] as const)('%s: every row equals the reference', (_, ours, published) => {
+    for (const sex of SEXES) {
+      const rows: Record<string, Record<string, number>> = published[sex];
+      const expected = Object.entries(rows).map(([band, row]) => [
+        band,
+        COOPER_PERCENTILES.map((p) => row[p]),
+      ]);
+      expect(Object.entries(ours[sex])).toEqual(expected);
+    }
+  });
+
+  it('ticks a few percentiles of the chart and not the whole table', () => {
+    const { bands } = placed({ test: 'sit-ups', value: 30, sex: 'male', ageYears: 35 });
+    expect(bands).toEqual(
+      [
+        [10, 26],
+        [20, 30],
+        [25, 31],
+        [30, 32],
+        [50, 36],
+        [70, 41],
+        [75, 42],
+        [90, 48],
+      ].map(([percentile, value]) => ({ word: `${percentile}th`, value })),
+    );
   });
 });

@@ -79,6 +79,9 @@ describe('a place', () => {
   });
 
   it('compares waist and height before rounding', () => {
+    expect(placed({ ...woman, test: 'waist', value: 81, detail: { heightCm: 163 } }).sentence).toBe(
+      '81 cm is 0.497 of your height: healthy.',
+    );
     expect(placed({ ...woman, test: 'waist', value: 81, detail: { heightCm: 163 } }).category?.word).toBe(
       'healthy',
     );
