@@ -48,14 +48,20 @@ function entryOf(facts: QueueFacts, now: Date, promisedHours: number): QueueEntr
 
 const compareText = (a: string, b: string): number => (a === b ? 0 : a < b ? -1 : 1);
 
+/** The first pair of reasons, one of each, that tells two entries apart; null when all that both have are alike. */
+function decidingPair(a: QueueEntry, b: QueueEntry): readonly [QueueReason, QueueReason] | null {
+  for (const [i, left] of a.reasons.entries()) {
+    const right = b.reasons[i];
+    if (right === undefined) return null;
+    if (compareReasons(left, right) !== 0) return [left, right];
+  }
+  return null;
+}
+
 /** Reason by reason; whoever has one more is first. Then by name and id, so that the order is always the same. */
 function compareEntries(a: QueueEntry, b: QueueEntry): number {
-  const pairs = Math.min(a.reasons.length, b.reasons.length);
-  for (let i = 0; i < pairs; i += 1) {
-    const [left, right] = [a.reasons[i], b.reasons[i]];
-    const order = left && right ? compareReasons(left, right) : 0;
-    if (order !== 0) return order;
-  }
+  const pair = decidingPair(a, b);
+  if (pair !== null) return compareReasons(...pair);
   return (
     b.reasons.length - a.reasons.length || compareText(a.name, b.name) || compareText(a.memberId, b.memberId)
   );
@@ -77,15 +83,14 @@ const lowerFirst = (sentence: string): string => sentence.charAt(0).toLowerCase(
 
 /** Why `a` stands above `b` in the queue, in a sentence. */
 export function whyAbove(a: QueueEntry, b: QueueEntry): string {
-  const [first, second] = [a.reasons[0], b.reasons[0]];
+  const [first, second] = decidingPair(a, b) ?? [a.reasons[0], b.reasons[0]];
   const pair = `${a.name} (${lowerFirst(first.sentence)}) stands above ${b.name} (${lowerFirst(second.sentence)})`;
   if (first.weight > second.weight) {
     const isSameWait = first.code === second.code && isWaiting(first);
     return `${pair}: ${isSameWait ? 'the wait is longer' : 'the reason weighs more'}.`;
   }
-  const order = compareReasons(first, second);
-  if (order < 0) return `${pair}: the same weight, and it is older.`;
+  if (compareReasons(first, second) < 0) return `${pair}: the same weight, and it is older.`;
   return a.reasons.length > b.reasons.length
-    ? `${pair}: the same weight, and there are more reasons.`
-    : `${pair}: the same weight, so the order is by the next reason and then by name.`;
+    ? `${pair}: the same, and there are more reasons.`
+    : `${pair}: the same, so the order is by name.`;
 }
