@@ -64,8 +64,8 @@ export const CHANGE_METHODS: readonly MethodEntry[] = [
     formula: `SEM = SD √(1 − ICC) where a study gives them; then (${PRIOR_REPEATS} × SEM² + own squared deviations) ÷ (${PRIOR_REPEATS} + own repeats), and the root of it`,
     units: 'The unit of the test',
     example: () => ({
-      inputs: 'Push-ups: SD between adults 10, test-retest correlation 0.97, no marks of your own yet',
-      result: `${formatNumber(standardErrorOfMeasurement(10, 0.97), 2)} push-ups`,
+      inputs: 'Push-ups: SD between adults 10, test-retest correlation 0.97, no marks of your own yet.',
+      result: `${formatNumber(standardErrorOfMeasurement(10, 0.97), 2)} push-ups.`,
     }),
     sources: [HOPKINS, WEIR, BATTERY],
     limits: [
@@ -84,8 +84,8 @@ export const CHANGE_METHODS: readonly MethodEntry[] = [
     example: () => {
       const error = standardErrorOfMeasurement(10, 0.97);
       return {
-        inputs: `Typical error ${formatNumber(error, 2)} push-ups`,
-        result: `${formatNumber(smallestRealChange(error, 95), 1)} push-ups at 95 %, ${formatNumber(smallestRealChange(error, 80), 1)} at 80 %`,
+        inputs: `Typical error ${formatNumber(error, 2)} push-ups.`,
+        result: `${formatNumber(smallestRealChange(error, 95), 1)} push-ups at 95 %, ${formatNumber(smallestRealChange(error, 80), 1)} at 80 %.`,
       };
     },
     sources: [WEIR, HOPKINS],
@@ -108,7 +108,7 @@ export const CHANGE_METHODS: readonly MethodEntry[] = [
           ? `${formatNumber(part.value, 1)} (${formatNumber(part.low, 1)} to ${formatNumber(part.high, 1)})`
           : '';
       return {
-        inputs: `Sit-ups week by week: ${EXAMPLE_MARKS.join(', ')}`,
+        inputs: `Sit-ups week by week: ${EXAMPLE_MARKS.join(', ')}.`,
         result: `${verdict}: level now ${span(level)}, change ${span(difference)}. “${sentence}”`,
       };
     },

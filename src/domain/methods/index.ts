@@ -1,6 +1,8 @@
 import { AEROBIC_METHODS } from '../aerobic/method.ts';
 import { BODY_METHODS } from '../body/method.ts';
+import { CHANGE_METHODS } from '../change/method.ts';
 import { LOAD_METHODS } from '../load/method.ts';
+import { PACE_METHODS } from '../pace/method.ts';
 import { PULSE_METHODS } from '../pulse/method.ts';
 import { READINESS_METHODS } from '../readiness/method.ts';
 import { STAIRS_METHODS } from '../stairs/method.ts';
@@ -13,6 +15,8 @@ export type { Flag, MethodEntry, MethodExample, MethodSource } from './types.ts'
 /** Every number that Newel works out, one entry each, in the order in which the methods page lists them. */
 export const METHODS: readonly MethodEntry[] = [
   ...STANDING_METHODS,
+  ...CHANGE_METHODS,
+  ...PACE_METHODS,
   ...STAIRS_METHODS,
   ...AEROBIC_METHODS,
   ...PULSE_METHODS,

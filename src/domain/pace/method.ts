@@ -16,7 +16,7 @@ export const PACE_METHODS: readonly MethodEntry[] = [
     formula: `Reps ÷ minutes, in each ten seconds and over five beats. Fade: (first third − last third) ÷ first third, worth a word from ${FADE_LIMIT * 100} %. Swing: fastest less slowest pace without the wildest tenth at each end, worth a word above ${SWING_LIMIT}. Pause: a beat of ${PAUSE_BEATS} usual ones or more. Pace to begin at: the mean of the test`,
     units: 'Reps a minute; seconds',
     example: () => ({
-      inputs: '14 reps in the first twenty seconds, 10 in the next, 7 in the last',
+      inputs: '14 reps in the first twenty seconds, 10 in the next, 7 in the last.',
       result: describePace({
         tapsMs: [...evenTaps(14, 0, 20_000), ...evenTaps(10, 20_000, 40_000), ...evenTaps(7, 40_000, 60_000)],
         durationMs: 60_000,
