@@ -25,7 +25,7 @@ export type AccessState = 'none' | 'trial' | 'active' | 'cancelling' | 'past-due
 export interface Access {
   readonly state: AccessState;
   readonly held: boolean;
-  /** The moment access ends if nothing more is paid; null when there is none, or none that is known. */
+  /** The moment access ends if nothing more is paid, or the moment it ended; null when none is known. */
   readonly until: Date | null;
   /** Lessons, plan, marks, thread. A person's own records can always be taken home, whatever this says. */
   readonly mayRead: boolean;
