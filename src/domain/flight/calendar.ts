@@ -25,10 +25,10 @@ export function localDate(now: Date, timeZone: string): string {
   return date;
 }
 
-/** The date `days` later (earlier when negative), ISO. */
+/** The date `days` later (earlier when negative), ISO. Throws a RangeError when either makes no date. */
 export function addDays(iso: string, days: number): string {
-  const date = dayOf(iso).plus({ days }).toISODate();
-  if (date === null) throw new RangeError(`Not a number of days: ${days}`);
+  const date = Number.isInteger(days) ? dayOf(iso).plus({ days }).toISODate() : null;
+  if (date === null) throw new RangeError(`Not a whole number of days: ${days}`);
   return date;
 }
 

@@ -1,3 +1,4 @@
+import { formatNumber } from '../numbers/format.ts';
 import type { Kit } from '../movement/types.ts';
 
 export type Rail = 'none' | 'one side' | 'both sides';
@@ -122,7 +123,7 @@ export interface CardPerson {
   readonly pregnant?: boolean;
 }
 
-const climbMetres = (house: House): string => ((house.stairCount * house.stepHeightMm) / 1000).toFixed(2);
+const climbMetres = (house: House): string => formatNumber((house.stairCount * house.stepHeightMm) / 1000, 1);
 
 /** The lines of the printable house card, most important first. Common practice, no source, where no rule is named. */
 export function cardLines(house: House, person: CardPerson = {}): string[] {

@@ -1,5 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
+import { findMovement } from '../figure/movements.ts';
 import { MOVEMENTS, rungsFor, type Kit, type MovementId } from '../movement/ladders.ts';
 import { planSession, trainable, type PlanSessionInput } from './plan-session.ts';
 
@@ -44,8 +45,10 @@ describe('the round of sessions (common practice, no source)', () => {
     expect(longer.minutes).toBe(28);
     expect(plan().warmUp.minutes).toBe(5);
     expect(plan().coolDown.minutes).toBe(5);
-    expect(plan().warmUp.figures).toContain('march');
-    expect(plan().coolDown.figures).toContain('walk-easy');
+    for (const { figures } of [plan().warmUp, plan().coolDown]) {
+      expect(figures.length).toBeGreaterThan(0);
+      for (const figure of figures) expect(findMovement(figure)).not.toBeNull();
+    }
   });
 
   it('leaves sit-ups and planks out in pregnancy', () => {
