@@ -10,11 +10,20 @@ export const LANDING_WEEKS: readonly number[] = [4, 8, 12];
 export const SESSIONS_A_WEEK = 3;
 
 const DAYS_A_WEEK = 7;
+const DAY_MS = 86_400_000;
 
-/** An ISO date as a UTC day. Throws a RangeError when `iso` is not a calendar date. */
-function dayOf(iso: string): DateTime {
-  const day = DateTime.fromISO(iso, { zone: 'utc' });
-  if (!day.isValid || !/^\d{4}-\d{2}-\d{2}$/.test(iso)) throw new RangeError(`Not an ISO date: ${iso}`);
+/** The ISO date of a count of days since 1970; null outside the years 0 to 9999. */
+function isoOf(day: number): string | null {
+  const date = new Date(day * DAY_MS);
+  const year = date.getUTCFullYear();
+  return year >= 0 && year <= 9999 ? date.toISOString().slice(0, 10) : null;
+}
+
+/** An ISO date as a count of days since 1970, plain arithmetic: a queue asks it a thousand times. */
+function dayOf(iso: string): number {
+  const day = /^\d{4}-\d{2}-\d{2}$/.test(iso) ? Date.parse(iso) / DAY_MS : NaN;
+  // Engines may read 29 February of a short year as 1 March: it is a date only if it reads back the same.
+  if (Number.isNaN(day) || isoOf(day) !== iso) throw new RangeError(`Not an ISO date: ${iso}`);
   return day;
 }
 
@@ -27,15 +36,13 @@ export function localDate(now: Date, timeZone: string): string {
 
 /** The date `days` later (earlier when negative), ISO. Throws a RangeError when either makes no date. */
 export function addDays(iso: string, days: number): string {
-  const date = Number.isInteger(days) ? dayOf(iso).plus({ days }).toISODate() : null;
+  const date = Number.isInteger(days) ? isoOf(dayOf(iso) + days) : null;
   if (date === null) throw new RangeError(`Not a whole number of days: ${days}`);
   return date;
 }
 
-/** Whole days from `from` to `to`; negative when `to` comes first. */
-export function daysBetween(from: string, to: string): number {
-  return Math.round(dayOf(to).diff(dayOf(from), 'days').days);
-}
+/** Whole days from `from` to `to`; negative when `to` comes first. Throws a RangeError when either is no date. */
+export const daysBetween = (from: string, to: string): number => dayOf(to) - dayOf(from);
 
 /** The week of a flight that `today` lies in: 1 on the first day, 13 and more once it is over, 0 and less before. */
 export function weekOfFlight(startsOn: string, today: string): number {

@@ -30,10 +30,10 @@ export interface FirstTargetInput {
 }
 
 /** A flight of stairs where the house's own is not known. Common practice, no source. */
-export const USUAL_STAIR_COUNT = 13;
+const USUAL_STAIR_COUNT = 13;
 
 /** From this age the first share is smaller. Common practice, no source, as are both factors. */
-export const OLDER_FROM_YEARS = 65;
+const OLDER_FROM_YEARS = 65;
 const OLDER_FACTOR = 0.85;
 const GENTLE_FACTOR = 0.8;
 

@@ -36,7 +36,7 @@ const isTooHard = ({ effort, effortAsked }: Done): boolean =>
   effort !== null && effort >= effortAsked + LIMITS.effortMargin;
 
 /** A set's amount less `percent`: whole, at least 1, and at least one unit less where there is one to spare. */
-export const lessen = (amount: number, percent: number): number =>
+const lessen = (amount: number, percent: number): number =>
   Math.max(1, Math.floor((amount * (100 - percent)) / 100));
 
 const doneWords = (done: Done): string =>

@@ -1,5 +1,5 @@
 /** Days that monotony looks at; days of rest count as 0. */
-export const MONOTONY_DAYS = 7;
+const MONOTONY_DAYS = 7;
 
 /** The published strain and monotony are weak evidence; every page that shows them says so. */
 export const STRAIN_CAUTION =

@@ -31,13 +31,13 @@ export const HOLD_FRESH_DAYS = 3;
 /** Days without a session that count as missed. */
 export const MISSED_DAYS = 9;
 /** Landings without a real gain that are worth a word. */
-export const STALLED_LANDINGS = 3;
+const STALLED_LANDINGS = 3;
 /** Days ahead that the yearly questions are announced. */
-export const QUESTIONS_AHEAD_DAYS = 14;
+const QUESTIONS_AHEAD_DAYS = 14;
 
 const HOUR_MS = 3_600_000;
 
-export const hoursSince = (since: Date, now: Date): number =>
+const hoursSince = (since: Date, now: Date): number =>
   Math.max(0, (now.getTime() - since.getTime()) / HOUR_MS);
 
 /** The weight of something that waits: it rises with every hour, and stays below pain. */

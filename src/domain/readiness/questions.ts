@@ -123,8 +123,6 @@ export const QUESTIONS = [
 type Asked = (typeof QUESTIONS)[number];
 type ValueOf<Q extends Asked> = Q['options'][number]['value'];
 
-export type QuestionId = Asked['id'];
-
 /** A whole set of answers: one value for each question, an array where several may fit. */
 export type ReadinessAnswers = {
   readonly [Q in Asked as Q['id']]: Q['kind'] extends 'many' ? readonly ValueOf<Q>[] : ValueOf<Q>;
