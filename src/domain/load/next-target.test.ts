@@ -75,6 +75,18 @@ describe('the rule of the practice: done over asked (common practice, no source)
     expect(why).toBe('116 % and 120 %, twice above 115 %: up to 3 sets of 11 reps.');
   });
 
+  it.each([
+    [1, 2],
+    [19, 20],
+    [20, 22],
+    [24, 25],
+  ])('a set of %i goes up to %i: a tenth, at least one, and not past the range', (amount, next) => {
+    const decision = nextTarget(
+      input({ emphasis: 'breath', current: target({ amount }), history: [hundred(130), hundred(130)] }),
+    );
+    expect(decision).toMatchObject({ rule: 'up-reps', target: { amount: next } });
+  });
+
   it('needs two results of its own after a rise', () => {
     const afterRise = [done(40, { askedTotal: 33 }), done(40, { askedTotal: 30 })];
     expect(nextTarget(input({ current: target({ amount: 11 }), history: afterRise })).rule).toBe('hold');
@@ -194,7 +206,11 @@ describe('what stands above the rule (common practice, no source)', () => {
   });
 
   it('keeps the sets the coach has set', () => {
-    expect(nextTarget(input({ current: target({ sets: 2 }), coachSets: 2 })).target.sets).toBe(2);
+    const coachSets = (sets: number, landingWeek = false) =>
+      nextTarget(input({ current: target({ sets }), coachSets: sets, landingWeek })).target.sets;
+    expect(coachSets(2)).toBe(2);
+    expect(coachSets(2, true)).toBe(1);
+    expect(coachSets(1, true)).toBe(1);
   });
 
   it.each([

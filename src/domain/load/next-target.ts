@@ -38,7 +38,8 @@ const CAREFUL_RULES: readonly string[] = ['pain', 'illness', 'gap', 'down'];
 
 function effortOf(input: NextTargetInput, step: Step): number {
   const { current, emphasis, gentle } = input;
-  const wanted = Math.min(EMPHASES[emphasis].effort, gentle === true ? GENTLE_EFFORT : 10);
+  const { effort } = EMPHASES[emphasis];
+  const wanted = gentle === true ? Math.min(effort, GENTLE_EFFORT) : effort;
   const most = CAREFUL_RULES.includes(step.rule) ? current.effort : current.effort + 1;
   return Math.max(1, Math.min(wanted, most) - step.effortLess);
 }

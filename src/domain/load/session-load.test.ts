@@ -78,6 +78,14 @@ describe('session load, monotony and strain', () => {
     expect(sessionLoad(effort, minutes)).toBeNull();
   });
 
+  it.each([
+    [0, 30, 0],
+    [5, 0, 0],
+    [10, 1, 10],
+  ])('effort %d for %d minutes is %d', (effort, minutes, load) => {
+    expect(sessionLoad(effort, minutes)).toBe(load);
+  });
+
   it('a load that makes no sense makes no week', () => {
     expect(weeklyLoad([100, NaN])).toBeNull();
     expect(weeklyLoad([])).toBe(0);
