@@ -14,6 +14,8 @@ export interface DocStore {
   get<T extends Doc>(kind: string, id: string): Promise<T | null>;
   /** Writes or overwrites. An overwritten document keeps its place in the order. */
   put(kind: string, doc: Doc): Promise<void>;
+  /** The same for many at once, in their order. */
+  putAll(kind: string, docs: Doc[]): Promise<void>;
   /** Newest first. */
   list<T extends Doc>(kind: string, where?: Where, limit?: number): Promise<T[]>;
   /** @returns whether there was one */

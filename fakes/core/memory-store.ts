@@ -22,6 +22,9 @@ export function createMemoryStore(): DocStore {
       return doc ? copy<T>(doc) : null;
     },
     put: async (kind, doc) => void kinds.set(kind, kindOf(kind).set(doc.id, copy<Doc>(doc))),
+    putAll: async (kind, docs) => {
+      for (const doc of docs) await store.put(kind, doc);
+    },
     list: async <T extends Doc>(kind: string, where: Where = {}, limit = Infinity) =>
       [...kindOf(kind).values()]
         .reverse()

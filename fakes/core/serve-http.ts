@@ -1,5 +1,4 @@
 import { createServer, type IncomingMessage, type ServerResponse } from 'node:http';
-import { Readable } from 'node:stream';
 import type { Handler } from './router.ts';
 
 export interface Served {
@@ -24,10 +23,10 @@ async function toRequest(message: IncomingMessage): Promise<Request> {
   });
 }
 
-function send(reply: Response, out: ServerResponse, headOnly: boolean): void {
+async function send(reply: Response, out: ServerResponse): Promise<void> {
+  const body = Buffer.from(await reply.arrayBuffer());
   out.writeHead(reply.status, Object.fromEntries(reply.headers));
-  if (reply.body && !headOnly) Readable.fromWeb(reply.body).pipe(out);
-  else out.end();
+  out.end(body);
 }
 
 /**
@@ -43,7 +42,7 @@ export async function serveHttp(
   const server = createServer((message, out) => {
     toRequest(message)
       .then(handler)
-      .then((reply) => send(reply, out, message.method === 'HEAD'))
+      .then((reply) => send(reply, out))
       .catch((error: unknown) => {
         onError(error);
         if (!out.headersSent) out.writeHead(500);

@@ -27,7 +27,7 @@ const SHEET = `
 html { background: var(--wall); color: var(--ink); font: 400 100%/1.55 system-ui, sans-serif }
 body { margin: 0; font-size: 1.0625rem }
 header { background: var(--dado); color: var(--on-dado); border-bottom: 3px solid var(--brass); padding: .75rem 1.25rem }
-header p { margin: 0 auto; max-width: 60rem; font-size: .9375rem }
+header p { margin: 0 auto; max-width: 57.5rem; font-size: .9375rem }
 main { max-width: 60rem; margin: 0 auto; padding: 2rem 1.25rem 4rem }
 main:focus { outline: none }
 main.narrow, .narrow { max-width: 38rem }
@@ -48,7 +48,9 @@ a { color: inherit; text-underline-offset: .2em }
 .scroll { overflow-x: auto }
 table { border-collapse: collapse; width: 100%; font-variant-numeric: tabular-nums lining-nums; font-size: .9375rem }
 th { text-align: left; font-size: .8125rem; font-weight: 600; color: var(--ink-2); border-bottom: 2px solid var(--line); padding: .375rem .75rem .375rem 0; white-space: nowrap }
-td { border-bottom: 1px solid var(--hair); padding: .5rem .75rem .5rem 0; vertical-align: top; overflow-wrap: anywhere }
+td { border-bottom: 1px solid var(--hair); padding: .5rem .75rem .5rem 0; vertical-align: top; overflow-wrap: break-word }
+td form { margin-top: .5rem }
+th[scope=row] { border-bottom: 1px solid var(--hair); padding-block: .5rem }
 .figure { text-align: right; padding-right: 0; white-space: nowrap }
 code, pre { font: .875rem/1.45 ui-monospace, monospace; overflow-wrap: anywhere; white-space: pre-wrap }
 fieldset { border: 0; padding: 0; margin: 1.25rem 0 }

@@ -83,7 +83,10 @@ export type PaymentIntentDoc = Kept<Stripe.PaymentIntent, 'customer' | 'latest_c
 export type ChargeDoc = Kept<Stripe.Charge, 'customer' | 'payment_intent'>;
 export type RefundDoc = Stripe.Refund;
 
-export type CheckoutDoc = Kept<Stripe.Checkout.Session, 'customer' | 'subscription' | 'invoice'> & {
+export type CheckoutDoc = Kept<
+  Omit<Stripe.Checkout.Session, 'line_items'>,
+  'customer' | 'subscription' | 'invoice'
+> & {
   line_items: ListOf<Omit<Stripe.LineItem, 'price'> & { price: PriceDoc }>;
   url: string | null;
 };
@@ -149,8 +152,16 @@ export interface ChaosDoc {
   drop: number;
 }
 
+/** What is left of a customer who was deleted. */
+export interface DeletedCustomerDoc {
+  id: string;
+  object: 'customer';
+  deleted: true;
+}
+
 export interface Docs {
   customer: CustomerDoc;
+  deleted_customer: DeletedCustomerDoc;
   product: ProductDoc;
   price: PriceDoc;
   coupon: CouponDoc;

@@ -1,5 +1,5 @@
 import type { DocStore, Where } from '../core/doc-store.ts';
-import type { Docs, EventDoc, Kind } from './docs.ts';
+import type { DeliveryDoc, Docs, EventDoc, Kind } from './docs.ts';
 import { missing } from './fault.ts';
 
 /** The version of the API whose shapes we answer in; the product pins the same one. */
@@ -30,8 +30,10 @@ export interface Ledger extends World {
   remove(kind: Kind, id: string): Promise<boolean>;
   /** Seconds since 1970: of a test clock if there is one, else real. */
   time(clock: string | null): Promise<number>;
-  /** Writes an event and puts it in the post. */
-  emit(type: string, object: object, at: number, previous?: object): Promise<void>;
+  /** Notes an event, and puts it in the post if the product has asked for such ones. Kept by `flush`. */
+  emit(type: string, object: object, at: number, previous?: object): void;
+  /** Writes the noted events; the last act of every transaction. */
+  flush(): Promise<void>;
 }
 
 /** A copy without the parts that must be asked for. */
@@ -55,6 +57,8 @@ export function openLedger(
   posted: (type: string) => boolean,
   key: string | null = null,
 ): Ledger {
+  const events: EventDoc[] = [];
+  const deliveries: DeliveryDoc[] = [];
   const ledger: Ledger = {
     ...world,
     id: (prefix) => makeId(prefix, world.random),
@@ -71,7 +75,7 @@ export function openLedger(
       clock
         ? (await ledger.need('test_helpers.test_clock', clock)).frozen_time
         : Math.floor(world.now().getTime() / 1000),
-    emit: async (type, object, at, previous) => {
+    emit: (type, object, at, previous) => {
       const goesOut = posted(type);
       const event: EventDoc = {
         id: ledger.id('evt'),
@@ -84,9 +88,9 @@ export function openLedger(
         request: { id: key ? ledger.id('req') : null, idempotency_key: key },
         type,
       };
-      await ledger.save('event', event);
+      events.push(event);
       if (!goesOut) return;
-      await ledger.save('delivery', {
+      deliveries.push({
         id: ledger.id('dlv'),
         event: event.id,
         type,
@@ -94,6 +98,10 @@ export function openLedger(
         nextAtMs: world.now().getTime(),
         attempts: [],
       });
+    },
+    flush: async () => {
+      await store.putAll('payments.event', events.splice(0));
+      await store.putAll('payments.delivery', deliveries.splice(0));
     },
   };
   return ledger;

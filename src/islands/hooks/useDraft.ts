@@ -2,7 +2,7 @@ import { useEffect, useRef, useState } from 'react';
 
 const SAVE_AFTER_MS = 800;
 
-export type DraftBody = Record<string, string | null>;
+export type DraftBody = Record<string, string | number | null>;
 
 /** Reads a copy kept on this device for when the line was down. */
 function readLocal<T extends DraftBody>(key: string): T | null {

@@ -48,11 +48,7 @@ async function writeSubscription(
     .onConflictDoUpdate({ target: subscriptions.id, set: values });
 }
 
-async function writeInvoice(
-  tx: Transaction,
-  memberId: string,
-  invoice: Stripe.Invoice,
-): Promise<void> {
+async function writeInvoice(tx: Transaction, memberId: string, invoice: Stripe.Invoice): Promise<void> {
   const parent = invoice.parent?.subscription_details?.subscription;
   const values = {
     memberId,

@@ -1,0 +1,8 @@
+import { z } from 'zod';
+
+export const EMPHASES = ['breath', 'balanced', 'muscle'] as const;
+
+export const StartFlightInput = z.strictObject({
+  once: z.uuid('Reload the page and try again.'),
+  emphasis: z.enum(EMPHASES, { error: 'Choose what the flight leans to.' }),
+});

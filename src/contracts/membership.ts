@@ -1,0 +1,6 @@
+import { z } from 'zod';
+
+/** The buttons of the membership page. */
+export const MembershipInput = z.strictObject({
+  do: z.enum(['portal', 'cancel', 'keep'], { error: 'Choose what to do.' }),
+});
