@@ -29,7 +29,7 @@ export function html(strings: TemplateStringsArray, ...parts: Part[]): Html {
 const POLICY =
   "default-src 'none'; style-src 'self'; img-src 'self' data:; frame-src 'self'; base-uri 'none'";
 
-export interface PageParts {
+interface PageParts {
   title: string;
   /** The line in the green band on top: which stand-in this is, and that nothing is real. */
   band: string;

@@ -1,7 +1,7 @@
 /** A stand-in's whole behaviour: a web-standard request in, a web-standard reply out. */
 export type Handler = (request: Request) => Promise<Response>;
 
-export interface Visit {
+interface Visit {
   request: Request;
   url: URL;
   /** The part of the path that `:name` stands for, decoded. */

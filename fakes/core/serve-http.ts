@@ -1,7 +1,7 @@
 import { createServer, type IncomingMessage, type ServerResponse } from 'node:http';
 import type { Handler } from './router.ts';
 
-export interface Served {
+interface Served {
   port: number;
   origin: string;
   close(): Promise<void>;

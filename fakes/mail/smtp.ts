@@ -2,14 +2,14 @@ import { SMTPServer } from 'smtp-server';
 import type { DocStore } from '../core/doc-store.ts';
 import { keepLetter } from './letters.ts';
 
-export interface SmtpParts {
+interface SmtpParts {
   store: DocStore;
   port: number;
   now: () => Date;
   id: () => string;
 }
 
-export interface Smtp {
+interface Smtp {
   port: number;
   close(): Promise<void>;
 }

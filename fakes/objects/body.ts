@@ -23,7 +23,7 @@ function readTrailer(text: string): Record<string, string> {
 }
 
 /** `aws-chunked`: pieces each with its length in hexadecimal, then an empty one, then headers that follow the body. */
-export function decodeChunks(raw: Buffer): Body {
+function decodeChunks(raw: Buffer): Body {
   const pieces: Buffer[] = [];
   let at = 0;
   for (;;) {

@@ -7,7 +7,7 @@ import { openShelf, type ObjectDoc, type Shelf } from './shelf.ts';
 import { verifySignature, type Keys } from './sigv4.ts';
 import { textsOf, xml } from './xml.ts';
 
-export interface ObjectsParts {
+interface ObjectsParts {
   store: DocStore;
   /** Where the bytes lie; made when missing. */
   folder: string;

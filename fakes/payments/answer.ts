@@ -13,7 +13,7 @@ import { parseForm } from './params.ts';
 const KEY_MAX = 255;
 const KEY_LIFE_MS = 24 * 3600 * 1000;
 
-export interface ApiParts {
+interface ApiParts {
   store: DocStore;
   world: World;
   posted: (type: string) => boolean;

@@ -5,7 +5,7 @@ import type { Ledger } from './ledger.ts';
 import { readParams } from './params.ts';
 
 /** A reply that is an error and still keeps what was written: a declined card leaves its attempt in the books. */
-export interface Refused {
+interface Refused {
   refused: Fault;
 }
 
@@ -33,7 +33,7 @@ export function call<P extends { expand?: string[] | undefined }>(
   };
 }
 
-export interface Paging {
+interface Paging {
   limit?: number | undefined;
   starting_after?: string | undefined;
   ending_before?: string | undefined;

@@ -9,7 +9,7 @@ export type Deliver = (
   headers: Record<string, string>,
 ) => Promise<{ status: number }>;
 
-export interface DeliveryParts {
+interface DeliveryParts {
   store: DocStore;
   url: string;
   secret: string;
@@ -19,7 +19,7 @@ export interface DeliveryParts {
 }
 
 /** Waits before the second, third … try. After the last the delivery counts as failed. */
-export const BACK_OFF_SECONDS = [1, 2, 4, 8, 15, 30, 60, 300, 900] as const;
+const BACK_OFF_SECONDS = [1, 2, 4, 8, 15, 30, 60, 300, 900] as const;
 
 const AT_ONCE = 4;
 
@@ -30,7 +30,7 @@ export const overHttp: Deliver = async (url, body, headers) => {
 };
 
 /** `t=…,v1=…`: HMAC-SHA-256 over the second and the body, as the SDK's `constructEvent` checks it. */
-export function signatureHeader(body: string, secret: string, at: Date): string {
+function signatureHeader(body: string, secret: string, at: Date): string {
   const second = Math.floor(at.getTime() / 1000);
   const signature = createHmac('sha256', secret).update(`${second}.${body}`).digest('hex');
   return `t=${second},v1=${signature}`;
@@ -48,7 +48,7 @@ function shuffled<T>(list: T[], random: () => number): T[] {
     .map(({ one }) => one);
 }
 
-export interface PostOffice {
+interface PostOffice {
   /** Sends what is due; called after every change. Returns at once. */
   wake(): void;
   /** Resolves when everything that is due has been tried. */

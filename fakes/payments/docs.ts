@@ -92,7 +92,7 @@ export type CheckoutDoc = Kept<
 };
 
 /** What a checkout session will make, kept beside it because the session itself does not show it. */
-export interface CheckoutPlan {
+interface CheckoutPlan {
   id: string;
   trial_end_days: number | null;
   trial_end: number | null;
@@ -153,7 +153,7 @@ export interface ChaosDoc {
 }
 
 /** What is left of a customer who was deleted. */
-export interface DeletedCustomerDoc {
+interface DeletedCustomerDoc {
   id: string;
   object: 'customer';
   deleted: true;

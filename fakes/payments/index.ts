@@ -18,7 +18,7 @@ const POSTED = /^(checkout\.session|customer|invoice|refund|test_helpers\.test_c
 
 const TICK_MS = 30_000;
 
-export interface PaymentsParts {
+interface PaymentsParts {
   store: DocStore;
   /** Where events go. */
   webhookUrl: string;
@@ -33,7 +33,7 @@ export interface PaymentsParts {
   deliver?: Deliver;
 }
 
-export interface Payments {
+interface Payments {
   handler: Handler;
   /** Resumes deliveries that waited, and lets real time pass for customers without a test clock. */
   start(): void;

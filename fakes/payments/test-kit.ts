@@ -31,7 +31,7 @@ export const sdkFor = (origin: string) => {
   });
 };
 
-export interface Sent {
+interface Sent {
   body: string;
   signature: string;
   event: Stripe.Event;
@@ -113,7 +113,7 @@ export async function openShop({ stripe }: Kit) {
   return { clock, product, price, customer, moveTo };
 }
 
-export type Shop = Awaited<ReturnType<typeof openShop>>;
+type Shop = Awaited<ReturnType<typeof openShop>>;
 
 /** Opens a checkout for the shop's customer and price. */
 export function openSession({ stripe }: Kit, { customer, price }: Shop, trialDays?: number) {

@@ -4,7 +4,7 @@ import type { Ledger } from '../ledger.ts';
 import { itemShape } from '../shapes/subscription.ts';
 import { periodEnd, sameRhythm } from './periods.ts';
 
-export interface ItemChange {
+interface ItemChange {
   id?: string | undefined;
   price?: string | undefined;
   quantity?: number | undefined;

@@ -6,7 +6,7 @@ import { chargeShape, paymentIntentShape } from '../shapes/payment.ts';
 import { DAY_SECONDS } from './periods.ts';
 
 /** Days after the first failure on which the card is tried again; after the last the subscription ends. */
-export const RETRY_DAYS = [3, 5, 7] as const;
+const RETRY_DAYS = [3, 5, 7] as const;
 
 export interface Attempt {
   at: number;

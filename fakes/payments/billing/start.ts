@@ -7,7 +7,7 @@ import { makeDiscounts, periodLines, redeem } from './amounts.ts';
 import { billNow, currentPeriod } from './lifecycle.ts';
 import { DAY_SECONDS, periodEnd } from './periods.ts';
 
-export interface NewSubscription {
+interface NewSubscription {
   customer: string;
   prices: { price: PriceDoc; quantity: number }[];
   at: number;

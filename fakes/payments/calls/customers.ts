@@ -49,7 +49,7 @@ export async function setDefaultCard(
   return { ...customer, invoice_settings: { ...customer.invoice_settings, default_payment_method: method } };
 }
 
-export interface NewCustomer {
+interface NewCustomer {
   email?: string | null | undefined;
   name?: string | null | undefined;
   phone?: string | null | undefined;

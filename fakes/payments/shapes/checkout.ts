@@ -1,7 +1,7 @@
 import { listOf } from '../call.ts';
 import type { CheckoutDoc, PriceDoc } from '../docs.ts';
 
-export interface CheckoutParts {
+interface CheckoutParts {
   id: string;
   at: number;
   expiresAt: number;

@@ -1,6 +1,6 @@
 import type { CustomerDoc } from '../docs.ts';
 
-export interface CustomerParts {
+interface CustomerParts {
   id: string;
   at: number;
   invoicePrefix: string;

@@ -1,7 +1,7 @@
 import { listOf } from '../call.ts';
 import type { CustomerDoc, InvoiceDoc, LineDoc, PriceDoc, SubscriptionDoc } from '../docs.ts';
 
-export interface LineParts {
+interface LineParts {
   description: string;
   amountMinor: number;
   price: PriceDoc;
@@ -52,7 +52,7 @@ export function lineShape(id: string, parts: LineParts): LineDoc {
   };
 }
 
-export interface InvoiceParts {
+interface InvoiceParts {
   id: string;
   at: number;
   customer: CustomerDoc;

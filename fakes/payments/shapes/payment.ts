@@ -1,7 +1,7 @@
 import type { ChargeDoc, InvoiceDoc, PaymentIntentDoc, PaymentMethodDoc } from '../docs.ts';
 import type { Fault } from '../fault.ts';
 
-export interface PaymentParts {
+interface PaymentParts {
   id: string;
   at: number;
   invoice: InvoiceDoc;
@@ -69,7 +69,7 @@ export function paymentIntentShape({
   };
 }
 
-export interface ChargeParts {
+interface ChargeParts {
   id: string;
   at: number;
   intent: string;

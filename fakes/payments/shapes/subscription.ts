@@ -24,7 +24,7 @@ const planOf = (price: PriceDoc) => ({
   usage_type: 'licensed',
 });
 
-export interface ItemParts {
+interface ItemParts {
   id: string;
   at: number;
   subscription: string;
