@@ -10,6 +10,14 @@ export interface LessonTitle {
 
 const WORDS_A_MINUTE = 200;
 
+/** Every text in a lesson's own facts, which are read as much as its body is. */
+const wordsOf = (value: unknown): string =>
+  typeof value === 'string'
+    ? value
+    : value && typeof value === 'object'
+      ? Object.values(value).map(wordsOf).join(' ')
+      : '';
+
 /** Titles, weeks and reading minutes of all lessons, in order; nothing of their text. */
 export async function lessonTitles(): Promise<{ all: LessonTitle[]; byWeek: Map<number, string> }> {
   const lessons = await getCollection('lessons');
@@ -20,7 +28,7 @@ export async function lessonTitles(): Promise<{ all: LessonTitle[]; byWeek: Map<
       title: data.title,
       week: data.week,
       free: data.free,
-      minutes: Math.max(1, Math.round(body.split(/\s+/).length / WORDS_A_MINUTE)),
+      minutes: Math.max(1, Math.round(`${body} ${wordsOf(data)}`.split(/\s+/).length / WORDS_A_MINUTE)),
     }));
   return {
     all,
