@@ -98,6 +98,10 @@ describe('access follows what was paid, to the minute', () => {
     });
   });
 
+  it('the grace is seven days, the rule of the practice (common practice, no source)', () => {
+    expect(GRACE_DAYS).toBe(7);
+  });
+
   it('a failed card without a moment counts to the end of the period at most', () => {
     expect(access(paid({ status: 'past_due' }), at(-1)).state).toBe('past-due');
     expect(access(paid({ status: 'past_due' }), at(0)).state).toBe('lapsed');

@@ -2,6 +2,7 @@ import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import {
   addDays,
+  FLIGHT_WEEKS,
   daysBetween,
   isLanding,
   LANDING_WEEKS,
@@ -27,6 +28,7 @@ describe('the weeks of a flight', () => {
 
   it('lands in weeks 4, 8 and 12', () => {
     expect(LANDING_WEEKS).toEqual([4, 8, 12]);
+    expect(LANDING_WEEKS.at(-1)).toBe(FLIGHT_WEEKS);
     expect([3, 4, 5, 8, 12, 13].map(isLanding)).toEqual([false, true, false, true, true, false]);
   });
 });
@@ -34,6 +36,8 @@ describe('the weeks of a flight', () => {
 describe('dates', () => {
   it.each([
     ['2026-12-31', 1, '2027-01-01'],
+    ['0000-01-02', -1, '0000-01-01'],
+    ['9999-12-30', 1, '9999-12-31'],
     ['2028-02-28', 1, '2028-02-29'],
     ['2027-03-01', -1, '2027-02-28'],
     // The clocks change on 28 March 2027 in Europe; a date has no clock.

@@ -91,6 +91,7 @@ describe('the house card', () => {
   it('says only what the house has, and its cautions last', () => {
     const bare = cardLines(house({ stairCount: 0, matLengthCm: null, chair: false }));
     expect(bare).toHaveLength(2);
+    expect(cardLines(house({ stairCount: 1 })).join('\n')).toContain('Stairs: 1 of 175 mm, 0.2 m up');
     const lines = cardLines(house({ bar: true, marginCm: 40 }));
     expect(lines.at(-1)).toBe(
       '40 cm free is tight; 60 cm all round keeps heads and elbows off the furniture.',

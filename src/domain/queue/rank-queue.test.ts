@@ -80,6 +80,14 @@ describe('the order of the queue (common practice, no source)', () => {
     expect(only({ payment: 'past-due' })).toMatchObject({ kind: 'rule', dueAt: null });
   });
 
+  it.each([
+    [10.4, 'waits 10 h, 14 h left'],
+    [24, 'waits 24 h, 0 h left'],
+    [24.1, 'waits 24 h, 1 h beyond the promise'],
+  ])('after %d hours it %s', (hours, words) => {
+    expect(only({ unanswered: checkIn(hours) })?.reasons[0].sentence).toContain(words);
+  });
+
   it('gives the earliest of what falls due', () => {
     const both = only({ unanswered: checkIn(2), unreadMessages: { since: hoursAgo(20) } });
     expect(both?.dueAt).toEqual(new Date(hoursAgo(20).getTime() + PROMISE * 3_600_000));
