@@ -19,6 +19,8 @@ export interface FigureLook {
 }
 
 const THUMB_WEIGHT = 2.4;
+/** As wide as its column, but a standing figure never taller than a screen of a phone. */
+const FULL = 'w-full max-h-96';
 /** Ladders where ear, hip and ankle are one line when it is right. */
 const STRAIGHT: ReadonlySet<string> = new Set(['push-up', 'plank']);
 
@@ -85,7 +87,7 @@ export function drawPhases(id: string, { body = 'even', view, muscles }: FigureL
         view: seen,
         window: shared,
         muscles,
-        className: 'w-full',
+        className: FULL,
       });
     });
     return { name, cue, svg };
@@ -111,7 +113,7 @@ export function drawFault(
   const draw = (isWrong: boolean) =>
     once(['fault', id, name, body, isWrong], () => {
       const window = windowFor(movement, [fault, fault.mendPhase], body, view);
-      const shared = { view, window, isHatched: true, className: 'w-full' };
+      const shared = { view, window, isHatched: true, className: FULL };
       return isWrong
         ? drawFigure(solveMovement(movement, fault, body), {
             ...shared,

@@ -2,6 +2,7 @@ import { and, eq, isNotNull } from 'drizzle-orm';
 import type { App } from '#server/app';
 import { lessonReads } from '#server/db/schema/index';
 import { AppError } from '#server/errors';
+import { once } from '#server/once';
 import { currentFlight, flightPosition } from './flights.ts';
 import { memberState } from './members.ts';
 import { writeMessage } from './messages.ts';
@@ -117,23 +118,24 @@ export async function keepPlace(app: App, viewer: Viewer | null, slug: string, p
     );
 }
 
-/** A line to the coach from a lesson, with the place attached. @throws AppError invalid when it is empty */
+/** A line to the coach from a lesson, with the place attached; the same `once` writes it once. @throws AppError invalid when it is empty */
 export async function writeLessonNote(
   app: App,
   viewer: Viewer | null,
-  note: { slug: string; place: string | null; words: string },
+  note: { slug: string; place: string | null; words: string; once: string },
 ): Promise<void> {
   const member = requireRole(viewer, 'member');
   const words = note.words.trim();
   if (words === '' || words.length > 4000)
     throw new AppError('invalid', 'Write a few words first.', { words: 'Write a few words first.' });
-  await writeMessage(app.db, {
-    memberId: member.id,
-    authorId: member.id,
-    byCoach: false,
-    words,
-    at: app.clock.now(),
-    lessonSlug: note.slug,
-    lessonPlace: note.place,
+  const line = { words, lessonSlug: note.slug, lessonPlace: note.place };
+  await once(app, member.id, { key: note.once, body: line }, async (tx) => {
+    await writeMessage(tx, {
+      ...line,
+      memberId: member.id,
+      authorId: member.id,
+      byCoach: false,
+      at: app.clock.now(),
+    });
   });
 }
