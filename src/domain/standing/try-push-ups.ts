@@ -16,7 +16,10 @@ export const PUSH_UP_AGES = [
  * One push-up test of a visitor: words and the drawing of the jamb. What is typed wrongly gets its sentence and a bare
  * jamb. The table is the one for the form: women on the knees, men on the toes.
  */
-export function tryPushUps(typed: { age: string; sex: Sex; count: string }): { words: string; drawing: string } {
+export function tryPushUps(typed: { age: string; sex: Sex; count: string }): {
+  words: string;
+  drawing: string;
+} {
   const count = parseCount(typed.count);
   if (!count.ok) return { words: count.reason, drawing: '' };
   const form = typed.sex === 'female' ? 'knees' : 'floor';
