@@ -13,14 +13,14 @@ export interface LivedWeek {
 
 /** Weekly growth, chance of each of three sessions, and done over asked, by arc. */
 const TEMPERS: Record<Arc, { growth: number; keen: number; share: number; writes: number }> = {
-  improving: { growth: 0.021, keen: 0.9, share: 1.07, writes: 0.92 },
-  stalling: { growth: 0.008, keen: 0.78, share: 1.0, writes: 0.8 },
-  lapsing: { growth: 0.012, keen: 0.72, share: 0.97, writes: 0.6 },
-  'hurt and back': { growth: 0.02, keen: 0.86, share: 1.04, writes: 0.85 },
+  improving: { growth: 0.034, keen: 0.9, share: 1.13, writes: 0.92 },
+  stalling: { growth: 0.012, keen: 0.78, share: 1.04, writes: 0.8 },
+  lapsing: { growth: 0.016, keen: 0.72, share: 1.02, writes: 0.6 },
+  'hurt and back': { growth: 0.03, keen: 0.86, share: 1.1, writes: 0.85 },
   held: { growth: 0.012, keen: 0.8, share: 1, writes: 0.8 },
-  trial: { growth: 0.015, keen: 0.85, share: 1.03, writes: 1 },
+  trial: { growth: 0.015, keen: 0.85, share: 1.08, writes: 1 },
   cancelled: { growth: 0.012, keen: 0.75, share: 1.01, writes: 0.7 },
-  'card failed': { growth: 0.018, keen: 0.84, share: 1.05, writes: 0.8 },
+  'card failed': { growth: 0.026, keen: 0.84, share: 1.1, writes: 0.8 },
   stopped: { growth: 0.014, keen: 0.85, share: 1.02, writes: 0.9 },
   new: { growth: 0, keen: 0, share: 1, writes: 0 },
 };

@@ -18,7 +18,10 @@ export interface Board {
   test: TestId;
   name: string;
   marks: Mark[];
+  /** Against the test day before the last. */
   judgement: ChangeJudgement;
+  /** Against the first mark. */
+  whole: ChangeJudgement;
   /** The verdict as the first words of a sentence: `Really better.` */
   verdict: string;
   standing: Standing;
@@ -46,7 +49,7 @@ export const formatOf = (test: TestId) => (value: number) =>
     ? formatDuration(value)
     : formatNumber(value, BENCHMARKS[test].decimals);
 
-const VERDICTS: Record<ChangeJudgement['verdict'], string> = {
+export const VERDICTS: Record<ChangeJudgement['verdict'], string> = {
   'really better': 'Really better.',
   'probably better': 'Probably better.',
   'no real change yet': 'No real change yet.',
@@ -102,6 +105,7 @@ function boardOf(
     marks: marks.map((mark) => ({ atDays: daysOf(mark.takenAt), value: mark.value, form: formKey(mark) })),
     today: daysOf(now),
   };
+  const whole = judgeChange(question);
   const judgement = judgeChange({ ...question, ...(before && { since: daysOf(before.takenAt) }) });
   const standing = standingOf({
     test,
@@ -121,14 +125,12 @@ function boardOf(
     name: benchmark.name,
     marks,
     judgement,
+    whole,
     verdict,
     standing,
     jamb: jambOf(test, marks, before, judgement, standing, timeZone, finding),
     // The curve shows all of it; the verdict looks back only to the landing before.
-    trend:
-      judged && marks.length >= TREND_MARKS
-        ? trendOf(test, marks, judgeChange(question), timeZone, finding)
-        : null,
+    trend: judged && marks.length >= TREND_MARKS ? trendOf(test, marks, whole, timeZone, finding) : null,
   };
 }
 
