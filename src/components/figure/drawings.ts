@@ -2,6 +2,7 @@ import type { BodyName } from '#domain/figure/bodies';
 import { drawFigure } from '#domain/figure/draw-figure';
 import { movementOf } from '#domain/figure/movements';
 import { solveMovement } from '#domain/figure/pose-of';
+import type { SolvedPose } from '#domain/figure/solve-pose';
 import type { Fault, Movement, ViewName } from '#domain/figure/types';
 import { viewOf } from '#domain/figure/view';
 import { jointWindow, windowOf, type Window } from '#domain/figure/window';
@@ -29,14 +30,21 @@ const STRAIGHT: ReadonlySet<string> = new Set(['push-up', 'plank']);
  * phases, bodies), so each is worked out once a process instead of 20 ms a request.
  */
 const drawn = new Map<string, string>();
+const solved = new Map<string, SolvedPose>();
 
-function once(key: unknown, make: () => string): string {
+function once<T>(kept: Map<string, T>, key: unknown, make: () => T): T {
   const name = JSON.stringify(key);
-  const known = drawn.get(name);
+  const known = kept.get(name);
   if (known !== undefined) return known;
   const made = make();
-  drawn.set(name, made);
+  kept.set(name, made);
   return made;
+}
+
+/** A phase or fault on a body, solved once. */
+function solve(movement: Movement, which: number | Fault, body: BodyName): SolvedPose {
+  const name = typeof which === 'number' ? which : which.name;
+  return once(solved, [movement.id, name, body], () => solveMovement(movement, which, body));
 }
 
 const looks = (size: FigureSize = 'full') =>
@@ -48,16 +56,16 @@ function windowFor(
   body: BodyName,
   view: ViewName,
 ): Window {
-  return jointWindow(whichs.map((which) => windowOf(solveMovement(movement, which, body), viewOf(view))));
+  return jointWindow(whichs.map((which) => windowOf(solve(movement, which, body), viewOf(view))));
 }
 
 /** One phase (0, 1 or 2) of a movement as SVG. */
 export function drawPhase(id: string, phase: number, look: FigureLook = {}): string {
-  return once(['phase', id, phase, look], () => {
+  return once(drawn, ['phase', id, phase, look], () => {
     const movement = movementOf(id);
     const { body = 'even', view = movement.view, size, muscles, className } = look;
     const title = `${movement.name}: ${movement.phases[phase]?.name ?? ''}`;
-    return drawFigure(solveMovement(movement, phase, body), {
+    return drawFigure(solve(movement, phase, body), {
       title,
       view,
       muscles,
@@ -79,10 +87,10 @@ export function drawPhases(id: string, { body = 'even', view, muscles }: FigureL
   const seen = view ?? movement.view;
   let shared: Window | undefined;
   return movement.phases.map(({ name, cue }, phase) => {
-    const svg = once(['phases', id, phase, body, seen, muscles], () => {
+    const svg = once(drawn, ['phases', id, phase, body, seen, muscles], () => {
       shared ??= windowFor(movement, [0, 1, 2], body, seen);
       const title = `${movement.name}, phase ${phase + 1}: ${name}`;
-      return drawFigure(solveMovement(movement, phase, body), {
+      return drawFigure(solve(movement, phase, body), {
         title,
         view: seen,
         window: shared,
@@ -111,16 +119,16 @@ export function drawFault(
   const fault = faultOf(id, name);
   const view = fault.view ?? movement.view;
   const draw = (isWrong: boolean) =>
-    once(['fault', id, name, body, isWrong], () => {
+    once(drawn, ['fault', id, name, body, isWrong], () => {
       const window = windowFor(movement, [fault, fault.mendPhase], body, view);
       const shared = { view, window, isHatched: true, className: FULL };
       return isWrong
-        ? drawFigure(solveMovement(movement, fault, body), {
+        ? drawFigure(solve(movement, fault, body), {
             ...shared,
             title: `Fault: ${name}`,
             faultAt: fault.at,
           })
-        : drawFigure(solveMovement(movement, fault.mendPhase, body), {
+        : drawFigure(solve(movement, fault.mendPhase, body), {
             ...shared,
             title: `Mended: not ${name}`,
             hasLine: STRAIGHT.has(movement.ladder) && view === 'side',
