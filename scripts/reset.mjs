@@ -1,23 +1,13 @@
-import { rmSync } from 'node:fs';
-import { join } from 'node:path';
-import { makeSecrets } from './lib/environment.mjs';
-import { Cluster, demoSecrets, ensurePostgres, NEWEL_FOLDER } from './lib/postgres.mjs';
-import { explain, step } from './lib/steps.mjs';
+import { NEWEL_FOLDER } from './lib/postgres.mjs';
+import { openPractice } from './lib/practice.mjs';
+import { PORTS } from './lib/ports.mjs';
+import { explain } from './lib/steps.mjs';
 
-/** `npm run reset`: empties the demo. The next start fills it anew. */
+/** `npm run reset`: empties the demo practice and fills it again. */
 try {
-  await step('Empty the practice', () => {
-    const secrets = demoSecrets(NEWEL_FOLDER, makeSecrets);
-    const cluster = new Cluster({
-      programs: ensurePostgres(),
-      folder: NEWEL_FOLDER,
-      password: secrets.database,
-    });
-    cluster.stop();
-    rmSync(cluster.data, { recursive: true, force: true });
-    rmSync(join(NEWEL_FOLDER, 'objects'), { recursive: true, force: true });
-    return 'npm start fills it again';
-  });
+  const practice = await openPractice({ folder: NEWEL_FOLDER, wanted: PORTS, fresh: true });
+  await practice.stop();
+  console.log('Emptied and filled again. npm start opens it.');
 } catch (error) {
   explain(error);
   process.exit(1);

@@ -1,11 +1,11 @@
 import { checkNode } from './lib/packages.mjs';
+import { PORTS } from './lib/ports.mjs';
 import { NEWEL_FOLDER } from './lib/postgres.mjs';
 import { openPractice } from './lib/practice.mjs';
 import { explain } from './lib/steps.mjs';
 
 /** `npm start` and, with --dev, `npm run dev`: see README.md. */
 const dev = process.argv.includes('--dev');
-const WANTED = { site: 4321, database: 4322, payments: 4323, inbox: 4324, smtp: 4325, objects: 4327 };
 
 let practice;
 let stopping = false;
@@ -28,7 +28,7 @@ try {
   checkNode();
   practice = await openPractice({
     folder: NEWEL_FOLDER,
-    wanted: WANTED,
+    wanted: PORTS,
     dev,
     onExit: (code) => {
       if (stopping) return;

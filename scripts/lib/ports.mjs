@@ -1,5 +1,8 @@
 import { createServer } from 'node:net';
 
+/** Where the demo is found when nothing else sits there. */
+export const PORTS = { site: 4321, database: 4322, payments: 4323, inbox: 4324, smtp: 4325, objects: 4327 };
+
 const isFree = (port) =>
   new Promise((done) => {
     const probe = createServer();

@@ -10,9 +10,18 @@ import { step } from './steps.mjs';
 /**
  * Brings the whole practice up in one folder: database, stand-ins, demo data, web and worker. `npm start`, `npm run dev`
  * and the browser stories all use it; they differ in folder, ports and in whether Astro's dev server answers.
+ * `fresh` empties the folder's data first.
  * @returns what runs, with `stop()` that ends all of it, database too
  */
-export async function openPractice({ folder, wanted, dev = false, fast = false, env = {}, onExit }) {
+export async function openPractice({
+  folder,
+  wanted,
+  dev = false,
+  fast = false,
+  fresh = false,
+  env = {},
+  onExit,
+}) {
   const children = new Children();
   let cluster;
   const stop = async () => {
@@ -27,6 +36,7 @@ export async function openPractice({ folder, wanted, dev = false, fast = false, 
     const { ports, moved } = await choosePorts(wanted);
     for (const words of moved) console.log(`  ${words}`);
     cluster = new Cluster({ programs, folder, password: secrets.database, fast });
+    if (fresh) cluster.empty(folder);
     await step('Database', async () => {
       cluster.start(ports.database);
       await cluster.ensureDatabases(['newel', 'newel_fakes']);
