@@ -39,7 +39,7 @@ export function useApp(start = '2026-11-10T09:00:00Z') {
     origin: PAYMENTS,
     now: () => clock.now(),
     random: () => (seed = (seed * 16_807) % 2_147_483_647) / 2_147_483_647,
-    deliver: () => Promise.resolve(true),
+    deliver: () => Promise.resolve({ status: 200 }),
   });
   const server = setupServer(
     ...mswHandlers(payments.handler, PAYMENTS),
