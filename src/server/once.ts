@@ -1,10 +1,13 @@
-import { and, eq } from 'drizzle-orm';
+import { and, eq, sql } from 'drizzle-orm';
 import { createHash } from 'node:crypto';
 import type { App } from '#server/app';
 import type { Transaction } from '#server/db/client';
 import { idempotencyKeys } from '#server/db/schema/index';
 import { AppError } from '#server/errors';
 import type { Enqueue } from '#server/jobs/boss';
+
+/** JSON's null, which the column takes; drizzle turns a plain null into SQL's, which it refuses. */
+const asJson = (value: unknown) => sql`${JSON.stringify(value ?? null)}::jsonb`;
 
 export interface Written<T> {
   status: number;
@@ -29,7 +32,7 @@ export function once<T>(
     const mine = and(eq(idempotencyKeys.userId, userId), eq(idempotencyKeys.key, key));
     const claimed = await tx
       .insert(idempotencyKeys)
-      .values({ userId, key, bodyHash, status: 200, reply: null, createdAt: app.clock.now() })
+      .values({ userId, key, bodyHash, status: 200, reply: asJson(null), createdAt: app.clock.now() })
       .onConflictDoNothing()
       .returning({ key: idempotencyKeys.key });
     if (claimed.length === 0) {
@@ -45,7 +48,7 @@ export function once<T>(
     const reply = await work(tx, enqueue);
     await tx
       .update(idempotencyKeys)
-      .set({ reply: reply ?? null })
+      .set({ reply: asJson(reply) })
       .where(mine);
     return { status: 200, reply, replayed: false };
   });

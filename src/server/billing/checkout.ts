@@ -2,6 +2,7 @@ import { and, eq } from 'drizzle-orm';
 import type { App } from '#server/app';
 import { plans, practice, stripeCustomers, subscriptions } from '#server/db/schema/index';
 import { AppError, notFound } from '#server/errors';
+import { memberState } from '#server/services/members';
 import { ensurePrice } from '#server/services/plans';
 import type { Viewer } from '#server/services/viewer';
 import { otherLive, syncCustomer } from './sync.ts';
@@ -33,7 +34,7 @@ export async function ensureCustomer(
 /**
  * Opens a hosted checkout for a plan.
  * @returns the address to go to
- * @throws AppError held while a clearance is missing, conflict when a plan is running already
+ * @throws AppError held while a clearance is missing, conflict before the readiness questions and when a plan is running
  */
 export async function openCheckout(app: App, viewer: Viewer, planId: string): Promise<string> {
   const [found] = await app.db
@@ -41,6 +42,9 @@ export async function openCheckout(app: App, viewer: Viewer, planId: string): Pr
     .from(plans)
     .where(and(eq(plans.id, planId), eq(plans.onSale, true)));
   if (!found) throw notFound();
+  const state = await memberState(app, viewer.id);
+  if (!state?.screen) throw new AppError('conflict', 'Answer the readiness questions first.');
+  if (state.hold) throw new AppError('held', 'Your plan is held. Nothing is charged until you are cleared.');
   if ((await otherLive(app, viewer.id)).length > 0)
     throw new AppError('conflict', 'You have a plan already. Nothing was charged.');
   const plan = await ensurePrice(app, found);
