@@ -35,6 +35,9 @@ const schema = z.object({
   LOG_LEVEL: z.enum(['silent', 'error', 'warn', 'info', 'debug']).default('info'),
 });
 
+/** The variables that are read; `.env.example` documents each. */
+export const ENV_NAMES: readonly string[] = Object.keys(schema.shape);
+
 export type Env = Readonly<ReturnType<typeof readEnv>>;
 
 /** Thrown at start when the configuration cannot be used; lists every problem by name, never by value. */
@@ -69,7 +72,7 @@ function productionProblems(env: z.infer<typeof schema>): string[] {
  */
 export function readEnv(source: Record<string, string | undefined> = process.env) {
   const known = Object.fromEntries(
-    Object.keys(schema.shape).flatMap((name) => (source[name] ? [[name, source[name]]] : [])),
+    ENV_NAMES.flatMap((name) => (source[name] ? [[name, source[name]]] : [])),
   );
   const parsed = schema.safeParse(known);
   if (!parsed.success) {
