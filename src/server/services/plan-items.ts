@@ -38,12 +38,18 @@ export function baselineOf(marks: readonly Mark[], stairCount: number | undefine
   } as Baseline;
 }
 
-const asDone = ({ item, sessionPain }: DoneRow): Done => ({
+/** Pain named at this movement, as bad as the worse of what was said of it and of the whole session. */
+const painOf = ({ item, sessionPain }: DoneRow): Pain => {
+  if ((item.pain ?? 'none') === 'none') return 'none';
+  return item.pain === 'strong' || sessionPain === 'strong' ? 'strong' : 'mild';
+};
+
+const asDone = ({ item, ...row }: DoneRow): Done => ({
   askedTotal: item.sets * item.amount,
   doneTotal: item.doneTotal ?? 0,
   effort: item.effortDone,
   effortAsked: item.effortAsked,
-  pain: (item.pain ?? 'none') === 'none' ? 'none' : ((sessionPain ?? item.pain ?? 'none') as Pain),
+  pain: painOf({ item, ...row }),
 });
 
 const asTarget = ({ item }: DoneRow): Target => ({

@@ -181,8 +181,11 @@ export async function logSession(
     )
     .returning({ id: trainingSessions.id });
   if (!row) throw notFound();
+  // Pain without a movement to its name counts for each of them: better one too light than one too heavy.
+  const isNamed = input.items.some(({ pain }) => pain !== 'none');
   const values = told.map(
-    ({ item, told: t }) => sql`(${item.id}::uuid, ${t?.doneTotal ?? 0}::smallint, ${t?.pain ?? 'none'})`,
+    ({ item, told: t }) =>
+      sql`(${item.id}::uuid, ${t?.doneTotal ?? 0}::smallint, ${(isNamed ? t?.pain : input.pain) ?? 'none'})`,
   );
   await tx.execute(sql`update ${sessionItems} set done_total = v.done, pain = v.pain, effort_done = ${input.effort}
     from (values ${sql.join(values, sql`, `)}) as v(id, done, pain) where ${sessionItems.id} = v.id`);
