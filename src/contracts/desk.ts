@@ -45,3 +45,16 @@ export interface RackLetter {
   due: string;
   why: string;
 }
+
+const NUMBERS = ['Nobody', 'One', 'Two', 'Three', 'Four', 'Five', 'Six', 'Seven', 'Eight', 'Nine'];
+
+/** `Seven wait`, `One waits`, `Nobody waits`. */
+export function waitWords(letters: number): string {
+  return `${NUMBERS[letters] ?? letters} ${letters <= 1 ? 'waits' : 'wait'}`;
+}
+
+/** The letter that comes after this member's: the one below it in the rack, else the first of the others. */
+export function letterAfter(letters: readonly RackLetter[], memberId: string): RackLetter | undefined {
+  const here = letters.findIndex((letter) => letter.memberId === memberId);
+  return letters[here + 1] ?? letters.find((letter) => letter.memberId !== memberId);
+}

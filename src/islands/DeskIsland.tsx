@@ -1,14 +1,9 @@
-import {
-  QueryClient,
-  QueryClientProvider,
-  useMutation,
-  useQuery,
-  useQueryClient,
-} from '@tanstack/react-query';
+import { QueryClientProvider, useMutation, useQueryClient } from '@tanstack/react-query';
 import { useEffect, useRef, useState, type FormEvent, type KeyboardEvent } from 'react';
-import { getJson, postJson, RequestError } from '#contracts/client';
-import { AnswerInput, type RackLetter } from '#contracts/desk';
+import { postJson, RequestError } from '#contracts/client';
+import { AnswerInput, letterAfter, type RackLetter } from '#contracts/desk';
 import { useDraft, type DraftBody } from './hooks/useDraft.ts';
+import { deskClient, takeLetter, useRack } from './hooks/useRack.ts';
 import { Glyph } from './ui/Glyph.tsx';
 import { Status } from './ui/Status.tsx';
 import { TextField } from './ui/TextField.tsx';
@@ -23,18 +18,24 @@ interface Props {
   rackAt: number;
 }
 
-const RACK = ['rack'];
+interface Sending {
+  words: string;
+  /** Chosen before the letter leaves the rack, since its place is gone afterwards. */
+  next: RackLetter | undefined;
+}
+
+/** Alt with an arrow moves from anywhere; `j` and `k` only while nothing is being typed. */
+function stepOf(event: globalThis.KeyboardEvent): -1 | 0 | 1 {
+  if (event.altKey) return event.key === 'ArrowDown' ? 1 : event.key === 'ArrowUp' ? -1 : 0;
+  const at = event.target;
+  const typing = at instanceof HTMLElement && at.closest('input, textarea, select') !== null;
+  if (typing || event.ctrlKey || event.metaKey) return 0;
+  return event.key === 'j' ? 1 : event.key === 'k' ? -1 : 0;
+}
 
 function Answer({ memberId, name, draft, rack, rackAt }: Props) {
   const client = useQueryClient();
-  const { data: letters } = useQuery({
-    queryKey: RACK,
-    queryFn: () => getJson<RackLetter[]>('/api/desk/queue'),
-    initialData: rack,
-    initialDataUpdatedAt: rackAt,
-    staleTime: 30_000,
-    refetchOnWindowFocus: true,
-  });
+  const letters = useRack(rack, rackAt);
   const { values, set, kept, drop } = useDraft(`answer:${memberId}`, { words: '', ...draft });
   const [fault, setFault] = useState('');
   const key = useRef('');
@@ -44,31 +45,24 @@ function Answer({ memberId, name, draft, rack, rackAt }: Props) {
     root.current?.setAttribute('data-ready', '');
   }, []);
 
-  const here = letters.findIndex((letter) => letter.memberId === memberId);
-  const next = letters[here + 1] ?? letters.find((letter) => letter.memberId !== memberId);
-
   const answer = useMutation({
-    mutationFn: (words: string) => postJson('/api/desk/answer', { memberId, words }, key.current),
+    // Without a line it fails at once and says so, instead of waiting unseen.
+    networkMode: 'always',
+    mutationFn: ({ words }: Sending) => postJson('/api/desk/answer', { memberId, words }, key.current),
     // The letter leaves the rack at once, and comes back when the sending fails.
-    onMutate: async () => {
-      await client.cancelQueries({ queryKey: RACK });
-      const before = client.getQueryData<RackLetter[]>(RACK);
-      client.setQueryData<RackLetter[]>(RACK, (now = []) =>
-        now.filter((letter) => letter.memberId !== memberId),
-      );
-      return { before };
-    },
-    onError: (error, _words, context) => {
-      client.setQueryData(RACK, context?.before);
+    onMutate: () => takeLetter(client, memberId),
+    onError: (error, _sending, putBack) => {
+      putBack?.();
       setFault(
-        error instanceof RequestError ? error.message : 'That did not go. The letter is back in the rack.',
+        `${error instanceof RequestError ? error.message : 'That did not go.'} The letter is back in the rack.`,
       );
     },
-    onSuccess: () => {
+    onSuccess: (_reply, { next }) => {
       drop();
       window.location.assign(next ? `/desk/${next.memberId}?said=sent` : '/desk?said=sent');
     },
   });
+  const next = answer.isPending ? answer.variables.next : letterAfter(letters, memberId);
 
   function send(event: FormEvent | KeyboardEvent) {
     event.preventDefault();
@@ -76,18 +70,19 @@ function Answer({ memberId, name, draft, rack, rackAt }: Props) {
     const parsed = AnswerInput.safeParse({ memberId, words: values.words });
     if (!parsed.success) return setFault(parsed.error.issues[0]?.message ?? '');
     setFault('');
-    answer.mutate(parsed.data.words);
+    answer.mutate({ words: parsed.data.words, next });
   }
 
   useEffect(() => {
     const move = (event: globalThis.KeyboardEvent) => {
-      if (!event.altKey || (event.key !== 'ArrowDown' && event.key !== 'ArrowUp')) return;
-      const to = letters[here + (event.key === 'ArrowDown' ? 1 : -1)];
+      const step = stepOf(event);
+      const here = letters.findIndex((letter) => letter.memberId === memberId);
+      const to = step === 0 ? undefined : letters[here + step];
       if (to) window.location.assign(`/desk/${to.memberId}`);
     };
     window.addEventListener('keydown', move);
     return () => window.removeEventListener('keydown', move);
-  }, [letters, here]);
+  }, [letters, memberId]);
 
   return (
     <div ref={root}>
@@ -102,7 +97,7 @@ function Answer({ memberId, name, draft, rack, rackAt }: Props) {
               Your answer to {name}
             </>
           }
-          hint="Ctrl and Enter sends. Alt and an arrow goes to the next letter."
+          hint="Ctrl and Enter sends. Alt and an arrow goes to the next letter; so do j and k outside the field."
           rows={6}
           maxLength={4000}
           value={values.words ?? ''}
@@ -128,7 +123,7 @@ function Answer({ memberId, name, draft, rack, rackAt }: Props) {
 
 /** The coach's answer beside the numbers, with the next letter a key away. */
 export default function DeskIsland(props: Props) {
-  const [client] = useState(() => new QueryClient());
+  const [client] = useState(deskClient);
   return (
     <QueryClientProvider client={client}>
       <Answer {...props} />

@@ -34,7 +34,8 @@ export function useDraft<T extends DraftBody>(key: string, start: T) {
   useEffect(() => {
     if (!changed.current) return;
     localStorage.setItem(`draft ${key}`, JSON.stringify(values));
-    const timer = setTimeout(() => void save(key, values, setKept), SAVE_AFTER_MS);
+    // Words that were sent meanwhile are no draft any more.
+    const timer = setTimeout(() => changed.current && void save(key, values, setKept), SAVE_AFTER_MS);
     const again = () => void save(key, values, setKept);
     window.addEventListener('online', again);
     return () => {
@@ -59,7 +60,8 @@ export function useDraft<T extends DraftBody>(key: string, start: T) {
 
 async function save(key: string, body: DraftBody, say: (words: string) => void): Promise<void> {
   try {
-    const reply = await fetch(`/api/drafts/${encodeURIComponent(key)}`, {
+    // A key is letters, digits, hyphens and one colon, which stands in a path as it is; `%3A` would be another spelling.
+    const reply = await fetch(`/api/drafts/${key}`, {
       method: 'PUT',
       headers: { 'content-type': 'application/json' },
       body: JSON.stringify({ body }),
