@@ -1,5 +1,6 @@
 import { and, eq, isNull } from 'drizzle-orm';
 import type { Balustrade } from '#domain/charts/balustrade';
+import type { Jamb } from '#domain/charts/jamb';
 import type { Post } from '#domain/charts/posts';
 import { FLIGHT_WEEKS, SESSIONS_A_WEEK } from '#domain/flight/calendar';
 import { sessionLoad } from '#domain/load/session-load';
@@ -38,6 +39,21 @@ export function stripOf(
     mostLoad: mostLoad ?? Math.max(1, ...weeks.map(({ load }) => load)),
   };
 }
+
+/** The desk's small board has room for three marks: the first, the one that now is judged against, and now. */
+export function deskJamb(jamb: Jamb): Jamb {
+  const now = jamb.marks.length - 1;
+  const before = jamb.beforeIndex ?? now - 1;
+  const kept = [...new Set([0, before, now])].filter((index) => index >= 0).sort((a, b) => a - b);
+  return {
+    ...jamb,
+    size: 'desk',
+    marks: kept.flatMap((index) => jamb.marks[index] ?? []),
+    beforeIndex: before >= 0 ? kept.indexOf(before) : undefined,
+  };
+}
+
+export type Dossier = Awaited<ReturnType<typeof readDossier>>;
 
 /** One member on one screen: thread, marks, sessions, what is asked next, open alerts. */
 export async function readDossier(app: App, state: MemberState) {
