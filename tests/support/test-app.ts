@@ -1,8 +1,12 @@
+import { mkdtempSync, rmSync } from 'node:fs';
+import { tmpdir } from 'node:os';
+import { join } from 'node:path';
 import { setupServer } from 'msw/node';
 import { http, passthrough } from 'msw';
 import { afterAll, beforeAll } from 'vitest';
 import { mswHandlers } from '#fakes/core/msw';
 import { createMemoryStore } from '#fakes/core/memory-store';
+import { createObjects } from '#fakes/objects/index';
 import { createPayments } from '#fakes/payments/index';
 import { createApp, type App } from '#server/app';
 import type { Clock } from '#server/clock';
@@ -12,6 +16,8 @@ import { createLog } from '#server/log';
 import { useDatabase } from './database.ts';
 
 const PAYMENTS = 'http://127.0.0.1:4323';
+const OBJECTS = 'http://127.0.0.1:4327';
+const STORE_KEYS = { accessKey: 'tests', secretKey: 'of the tests' };
 export const WEBHOOK_SECRET = 'whsec_integration';
 
 /** A clock that stands until it is moved. */
@@ -24,7 +30,7 @@ export class TestClock implements Clock {
 }
 
 /**
- * A real App on a database of this file's own, with a standing clock, recorded mail and the payment stand-in behind msw.
+ * A real App on a database of this file's own, with a standing clock, recorded mail and the stand-ins for payments and pictures behind msw.
  * Any other outgoing request fails the test.
  */
 export function useApp(start = '2026-11-10T09:00:00Z') {
@@ -41,8 +47,17 @@ export function useApp(start = '2026-11-10T09:00:00Z') {
     random: () => (seed = (seed * 16_807) % 2_147_483_647) / 2_147_483_647,
     deliver: () => Promise.resolve({ status: 200 }),
   });
+  const folder = mkdtempSync(join(tmpdir(), 'newel-objects-'));
+  // The SDK signs with real time, whatever the practice's clock says.
+  const objects = createObjects({
+    store: createMemoryStore(),
+    folder,
+    keys: STORE_KEYS,
+    now: () => new Date(),
+  });
   const server = setupServer(
     ...mswHandlers(payments.handler, PAYMENTS),
+    ...mswHandlers(objects, OBJECTS),
     http.all('http://127.0.0.1:0/*', () => passthrough()),
   );
   let app: App | undefined;
@@ -52,6 +67,9 @@ export function useApp(start = '2026-11-10T09:00:00Z') {
       DATABASE_URL: database.url(),
       STRIPE_API_URL: PAYMENTS,
       STRIPE_WEBHOOK_SECRET: WEBHOOK_SECRET,
+      S3_ENDPOINT: OBJECTS,
+      S3_ACCESS_KEY: STORE_KEYS.accessKey,
+      S3_SECRET_KEY: STORE_KEYS.secretKey,
       LOG_LEVEL: 'silent',
     });
     const mailer = {
@@ -64,6 +82,7 @@ export function useApp(start = '2026-11-10T09:00:00Z') {
     await app?.close();
     await payments.close();
     server.close();
+    rmSync(folder, { recursive: true, force: true });
   });
   return {
     clock,
