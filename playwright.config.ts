@@ -14,6 +14,8 @@ export default defineConfig({
   reporter: [['list'], ['json', { outputFile: 'test-results/report.json' }]],
   use: {
     baseURL: process.env['E2E_ORIGIN'] ?? 'http://localhost:4321',
+    actionTimeout: 15_000,
+    navigationTimeout: 30_000,
     locale: 'en-GB',
     timezoneId: 'Europe/London',
     launchOptions: {

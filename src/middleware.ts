@@ -29,6 +29,9 @@ export const onRequest = defineMiddleware(async (context, next) => {
   }
 });
 
+/** Where a page leads that may not be opened for these reasons: it says what to do. */
+const INSTEAD = { held: '/held', 'payment-needed': '/account/membership' } as const;
+
 function reply(context: APIContext, error: unknown): Response {
   const { locals, url } = context;
   const expected = isAppError(error);
@@ -53,10 +56,15 @@ function reply(context: APIContext, error: unknown): Response {
     };
     return Response.json(body, { status });
   }
+  if (expected && error.code === 'forbidden' && locals.viewer?.role === 'visitor')
+    return context.redirect('/join', 303);
   if (expected && error.code === 'signed-out') {
     return context.redirect(`/sign-in?next=${encodeURIComponent(url.pathname + url.search)}`, 303);
   }
-  const html = locals.errorPage?.(status) ?? locals.errorPage?.(500);
+  if (expected && context.request.method === 'GET' && error.code in INSTEAD) {
+    return context.redirect(INSTEAD[error.code as keyof typeof INSTEAD], 303);
+  }
+  const html = locals.errorPage?.(status) ?? locals.errorPage?.(status < 500 ? 400 : 500);
   return new Response(html ?? message, {
     status,
     headers: { 'content-type': html ? 'text/html; charset=utf-8' : 'text/plain; charset=utf-8' },

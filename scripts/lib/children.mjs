@@ -1,4 +1,5 @@
 import { spawn } from 'node:child_process';
+import { createWriteStream } from 'node:fs';
 import { ROOT } from './root.mjs';
 import { StepError } from './steps.mjs';
 
@@ -10,9 +11,9 @@ export class Children {
 
   /**
    * Starts `node file` and waits until it says that it is ready (a line with `mark` on standard output).
-   * `onExit` is called when it ends by itself.
+   * `onExit` is called when it ends by itself; what it prints is added to `logFile`.
    */
-  start(name, args, { env, mark, onExit, timeoutMs = 60_000, quiet = true, cwd = ROOT }) {
+  start(name, args, { env, mark, onExit, timeoutMs = 60_000, quiet = true, logFile, cwd = ROOT }) {
     const child = spawn(process.execPath, args, {
       cwd,
       env: { ...process.env, ...env },
@@ -20,6 +21,7 @@ export class Children {
     });
     this.#running.add(child);
     let said = '';
+    const log = logFile ? createWriteStream(logFile, { flags: 'a' }) : null;
     return new Promise((done, fail) => {
       const give = (error) => {
         clearTimeout(timer);
@@ -39,6 +41,7 @@ export class Children {
       );
       const hear = (chunk) => {
         said = (said + chunk).slice(-20_000);
+        log?.write(chunk);
         if (!quiet) process.stdout.write(chunk);
         if (mark && said.includes(mark)) give();
       };

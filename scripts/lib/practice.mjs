@@ -77,7 +77,13 @@ export async function openPractice({
       : { args: ['--enable-source-maps', join('dist', 'main.mjs')], mark: null, env: product };
     await step('Web and worker', () =>
       children
-        .start('The site', web.args, { env: web.env, mark: web.mark, onExit, quiet: !dev })
+        .start('The site', web.args, {
+          env: web.env,
+          mark: web.mark,
+          onExit,
+          quiet: !dev,
+          logFile: join(folder, 'site.log'),
+        })
         .then(() => ''),
     );
     return { ports, stop, cluster, product };

@@ -1,7 +1,8 @@
 import { z } from 'zod';
+import type { FormValues } from '#contracts/form-values';
 import { AppError } from '#server/errors';
 
-export type FormValues = Record<string, string | string[]>;
+export { typed, type FormValues } from '#contracts/form-values';
 
 export type FormRead<T> =
   | { ok: true; data: T; values: FormValues }
@@ -45,14 +46,4 @@ export async function readForm<S extends z.ZodType>(
   return parsed.success
     ? { ok: true, data: parsed.data, values }
     : { ok: false, errors: fieldErrors(parsed.error), values };
-}
-
-/** Text for an input's `value`, from what was typed or, before that, from what is stored. */
-export function typed(
-  values: FormValues | undefined,
-  name: string,
-  stored: string | number | null = '',
-): string {
-  const value = values?.[name];
-  return Array.isArray(value) ? (value[0] ?? '') : (value ?? String(stored ?? ''));
 }

@@ -43,9 +43,9 @@ describe('the schema', () => {
     await audit(world.app.db, { at: at(1), actorId: owner.id, action: 'changed a plan' });
     const mine = eq(auditEntries.actorId, owner.id);
     const refused = /never changed/;
-    expect(await brokenConstraint(world.app.db.update(auditEntries).set({ action: 'x' }).where(mine))).toMatch(
-      refused,
-    );
+    expect(
+      await brokenConstraint(world.app.db.update(auditEntries).set({ action: 'x' }).where(mine)),
+    ).toMatch(refused);
     expect(await brokenConstraint(world.app.db.delete(auditEntries).where(mine))).toMatch(refused);
   });
 
@@ -125,7 +125,12 @@ describe('the pool', () => {
     );
     await admin.end();
     await expect
-      .poll(() => world.app.pool.query('select 1 as one').then(({ rows }) => rows, () => []))
+      .poll(() =>
+        world.app.pool.query('select 1 as one').then(
+          ({ rows }) => rows,
+          () => [],
+        ),
+      )
       .toEqual([{ one: 1 }]);
   });
 });

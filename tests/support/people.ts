@@ -16,7 +16,13 @@ export async function addPerson(
   const now = app.clock.now();
   const [user] = await app.db
     .insert(users)
-    .values({ email: `${role}-${made}@skerrow.example`, name: `The ${role} ${made}`, role, createdAt: now, ...given })
+    .values({
+      email: `${role}-${made}@skerrow.example`,
+      name: `The ${role} ${made}`,
+      role,
+      createdAt: now,
+      ...given,
+    })
     .returning();
   if (!user) throw new Error('the person was not written');
   const cookie = app.random.token(32);
@@ -38,7 +44,11 @@ export async function addPerson(
 /** A member who joined a month ago with this coach and whose plan is paid until in a month. */
 export async function addMember(
   app: App,
-  { coach, plan = true, ...member }: { coach: Viewer | null; plan?: boolean } & Partial<
+  {
+    coach,
+    plan = true,
+    ...member
+  }: { coach: Viewer | null; plan?: boolean } & Partial<
     Omit<typeof members.$inferInsert, 'userId' | 'coachId'>
   >,
 ): Promise<Viewer & { cookie: string }> {
