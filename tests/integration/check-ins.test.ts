@@ -118,13 +118,18 @@ describe('the weekly check-in', () => {
     ['sleep of 6', { sleep: 6 }, 'sleep'],
     ['effort of 0', { effort: 0 }, 'effort'],
     ['pain without a place', { pain: 'strong' }, 'painWhere'],
-    ['a field it does not know', { memberId: 'somebody' }, 'form'],
   ])('refuses %s at its field and stores nothing', async (_, more, field) => {
     const member = await addMember(world.app, { coach });
     const sending = send(member, { ...told(), ...more });
     await expect(sending).rejects.toMatchObject({ code: 'invalid' });
     const fields = await sending.catch((error: { fields: Record<string, string> }) => error.fields);
     expect(Object.keys(fields)).toEqual([field]);
+    expect(await countOf(member.id)).toBe(0);
+  });
+
+  it('refuses a field it does not know: the sender is not one of our pages', async () => {
+    const member = await addMember(world.app, { coach });
+    expect(await codeOf(send(member, { ...told(), memberId: member.id }))).toBe('bad-request');
     expect(await countOf(member.id)).toBe(0);
   });
 

@@ -1,7 +1,7 @@
 import { and, desc, eq, isNull } from 'drizzle-orm';
 import type { App } from '#server/app';
 import type { Transaction } from '#server/db/client';
-import { alerts, holds, users } from '#server/db/schema/index';
+import { alerts, holds, members, users } from '#server/db/schema/index';
 import { AppError } from '#server/errors';
 import { audit } from './audit.ts';
 import { requireOwnMember } from './members.ts';
@@ -14,11 +14,16 @@ export async function openHold(
   tx: Transaction,
   hold: { memberId: string; cause: Cause; reason: string; openedBy: string | null; at: Date },
 ): Promise<boolean> {
+  // The member's row is the lock: two reports at once find one hold. It lets inserts that point to the row go on.
+  await tx
+    .select({ id: members.userId })
+    .from(members)
+    .where(eq(members.userId, hold.memberId))
+    .for('no key update');
   const [running] = await tx
     .select({ id: holds.id })
     .from(holds)
-    .where(and(eq(holds.memberId, hold.memberId), isNull(holds.endedAt)))
-    .for('update');
+    .where(and(eq(holds.memberId, hold.memberId), isNull(holds.endedAt)));
   if (running) return false;
   const { at, ...rest } = hold;
   await tx.insert(holds).values({ ...rest, startedAt: at });
