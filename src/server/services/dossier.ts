@@ -1,6 +1,5 @@
 import { and, eq, isNull } from 'drizzle-orm';
 import type { Balustrade } from '#domain/charts/balustrade';
-import type { Jamb } from '#domain/charts/jamb';
 import type { Post } from '#domain/charts/posts';
 import { FLIGHT_WEEKS, SESSIONS_A_WEEK } from '#domain/flight/calendar';
 import { sessionLoad } from '#domain/load/session-load';
@@ -37,19 +36,6 @@ export function stripOf(
     weeks,
     span: FLIGHT_WEEKS,
     mostLoad: mostLoad ?? Math.max(1, ...weeks.map(({ load }) => load)),
-  };
-}
-
-/** The desk's small board has room for three marks: the first, the one that now is judged against, and now. */
-export function deskJamb(jamb: Jamb): Jamb {
-  const now = jamb.marks.length - 1;
-  const before = jamb.beforeIndex ?? now - 1;
-  const kept = [...new Set([0, before, now])].filter((index) => index >= 0).sort((a, b) => a - b);
-  return {
-    ...jamb,
-    size: 'desk',
-    marks: kept.flatMap((index) => jamb.marks[index] ?? []),
-    beforeIndex: before >= 0 ? kept.indexOf(before) : undefined,
   };
 }
 
