@@ -5,7 +5,7 @@ import type { App } from '#server/app';
 import { flights, holds, members, trainingSessions, users } from '#server/db/schema/index';
 import { loadOf, stripOf } from './dossier.ts';
 import type { SessionRow } from './training.ts';
-import type { Viewer } from './viewer.ts';
+import { requireRole, type Viewer } from './viewer.ts';
 
 export interface CaseloadRow {
   memberId: string;
@@ -19,8 +19,9 @@ export interface CaseloadRow {
   strip: Balustrade | null;
 }
 
-/** All members of a coach, those who slipped most first. Two queries. */
+/** All members of a coach, those who slipped most first. Two queries. @throws AppError signed-out, forbidden */
 export async function caseload(app: App, viewer: Viewer): Promise<CaseloadRow[]> {
+  requireRole(viewer, 'coach');
   const now = app.clock.now();
   const people = await app.db
     .selectDistinctOn([members.userId], {

@@ -11,12 +11,14 @@ import { audit } from './audit.ts';
 import { dropDraft } from './drafts.ts';
 import { markThreadRead, writeMessage } from './messages.ts';
 import { queueFacts } from './queue-facts.ts';
-import type { Viewer } from './viewer.ts';
+import { requireOwnMember } from './members.ts';
+import { requireRole, type Viewer } from './viewer.ts';
 
 const PROMISE_HOURS = 24;
 
-/** Who needs this coach first, and why. Four queries. */
+/** Who needs this coach first, and why. Four queries, however many members. @throws AppError signed-out, forbidden */
 export async function queueFor(app: App, viewer: Viewer): Promise<QueueEntry[]> {
+  requireRole(viewer, 'coach');
   const [facts, [home]] = await Promise.all([
     queueFacts(app, viewer.id),
     app.db.select({ hours: practice.answerWithinHours }).from(practice),
@@ -44,7 +46,7 @@ export function rackOf(queue: readonly QueueEntry[], timeZone: string): RackLett
 }
 
 /**
- * Sends the coach's answer: it stamps the oldest waiting check-in, marks the thread as read, tells the member by mail, and
+ * Sends the coach's answer: it stamps every check-in that waits, marks the thread as read, tells the member by mail, and
  * the letter leaves the rack.
  * @throws AppError not-found for a member who is not this coach's
  */
@@ -89,14 +91,17 @@ export async function answerMember(
   return { answered: waiting.length > 0 };
 }
 
-/** Takes a member's open alerts off the desk. The caller has checked whose member it is. */
+/** Takes a member's open alerts off the desk. @throws AppError not-found for a member who is not this coach's */
 export async function settleAlerts(app: App, viewer: Viewer, memberId: string): Promise<void> {
+  await requireOwnMember(app, viewer, memberId);
   const now = app.clock.now();
   await app.db.transaction(async (tx) => {
-    await tx
+    const settled = await tx
       .update(alerts)
       .set({ settledAt: now, settledBy: viewer.id })
-      .where(and(eq(alerts.memberId, memberId), isNull(alerts.settledAt)));
+      .where(and(eq(alerts.memberId, memberId), isNull(alerts.settledAt)))
+      .returning({ id: alerts.id });
+    if (settled.length === 0) return;
     await audit(tx, { at: now, actorId: viewer.id, action: 'settled an alert', subjectId: memberId });
   });
 }

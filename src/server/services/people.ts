@@ -8,9 +8,10 @@ import { requireRole, type Viewer } from './viewer.ts';
 
 const coaches = alias(users, 'coaches');
 
-/** Coaches with the number of their members. */
-export const listCoaches = (app: App) =>
-  app.db
+/** Coaches with the number of their members. Owner only. */
+export function listCoaches(app: App, viewer: Viewer) {
+  requireRole(viewer, 'owner');
+  return app.db
     .select({
       id: users.id,
       name: users.name,
@@ -22,10 +23,12 @@ export const listCoaches = (app: App) =>
     .where(and(eq(users.role, 'coach'), isNull(users.disabledAt)))
     .groupBy(users.id)
     .orderBy(asc(users.name));
+}
 
-/** Members and people on the way in, with their coach; no health data. */
-export const listMembers = (app: App) =>
-  app.db
+/** Members and people on the way in, with their coach; no health data. Owner only. */
+export function listMembers(app: App, viewer: Viewer) {
+  requireRole(viewer, 'owner');
+  return app.db
     .select({
       id: users.id,
       name: users.name,
@@ -39,9 +42,13 @@ export const listMembers = (app: App) =>
     .innerJoin(users, eq(users.id, members.userId))
     .leftJoin(coaches, eq(coaches.id, members.coachId))
     .orderBy(asc(users.name));
+}
 
-export const openInvites = (app: App) =>
-  app.db.select().from(invites).where(isNull(invites.acceptedAt)).orderBy(asc(invites.createdAt));
+/** Invitations that nobody has taken up yet. Owner only. */
+export function openInvites(app: App, viewer: Viewer) {
+  requireRole(viewer, 'owner');
+  return app.db.select().from(invites).where(isNull(invites.acceptedAt)).orderBy(asc(invites.createdAt));
+}
 
 /** Invites a coach by mail; the invitation is spent at the first sign-in. @throws AppError conflict for a known address */
 export async function inviteCoach(

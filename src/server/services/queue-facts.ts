@@ -56,7 +56,7 @@ const baseRows = (app: App, coachId: string) =>
       and not by_coach) msg on true
     left join lateral (select id, starts_on from flights where member_id = m.user_id order by number desc limit 1) f on true
     left join lateral (select max(done_at) as last_session,
-      count(*) filter (where flight_id = f.id and week = (${localDate(app.clock.now(), 'UTC')}::date - f.starts_on) / 7)::int as sessions_last_week
+      count(*) filter (where flight_id = f.id and week = ((${app.clock.now().toISOString()}::timestamptz at time zone u.time_zone)::date - f.starts_on) / 7)::int as sessions_last_week
       from training_sessions where member_id = m.user_id and done_at is not null) s on true
     left join lateral (select array_agg(week) as weeks from test_days where flight_id = f.id and finished_at is not null) t on true
     left join lateral (select i.movement from training_sessions ts join session_items i on i.session_id = ts.id

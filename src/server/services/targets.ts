@@ -3,15 +3,15 @@ import type { TargetInput } from '#contracts/desk';
 import { isRung, movementOf, rungOf } from '#domain/movement/ladders';
 import type { App } from '#server/app';
 import { sessionItems, targetOverrides, trainingSessions } from '#server/db/schema/index';
-import { AppError } from '#server/errors';
+import { AppError, notFound } from '#server/errors';
 import { audit } from './audit.ts';
 import type { MemberState } from './members.ts';
-import type { Viewer } from './viewer.ts';
+import { requireRole, type Viewer } from './viewer.ts';
 
 /**
  * A coach's own target, in red, with why. It changes the session that is planned; when the movement is not in that one, it
  * waits for the next that has it. What the rule said is kept beside it.
- * @throws AppError invalid for a variant that is not of the movement
+ * @throws AppError not-found for a member who is not this coach's, invalid for a variant that is not of the movement
  */
 export async function changeTarget(
   app: App,
@@ -19,6 +19,8 @@ export async function changeTarget(
   state: MemberState,
   input: TargetInput,
 ): Promise<void> {
+  requireRole(viewer, 'coach');
+  if (state.member.coachId !== viewer.id) throw notFound();
   if (!isRung(input.rung) || movementOf(input.rung) !== input.movement) {
     throw new AppError('invalid', 'Choose a variant of this movement.', {
       rung: 'Choose a variant of this movement.',
