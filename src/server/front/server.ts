@@ -37,6 +37,11 @@ export interface Front {
 
 /** Parts of Astro's server that this product never uses and that therefore never answer. */
 const CLOSED = ['/_image', '/_server-islands', '/_actions', '/api/auth'];
+const UNREADABLE: Record<string, string> = {
+  HPE_HEADER_OVERFLOW: '431 Request Header Fields Too Large',
+  ERR_HTTP_REQUEST_TIMEOUT: '408 Request Timeout',
+};
+const NOTHING_MORE = 'cache-control: no-store\r\nconnection: close\r\ncontent-length: 0\r\n\r\n';
 const METHODS = new Set(['GET', 'HEAD', 'POST', 'PUT', 'DELETE']);
 
 /**
@@ -144,6 +149,12 @@ export function createFront(options: FrontOptions): Front {
       log.error({ requestId, fault: error instanceof Error ? error.stack : 'unknown' }, 'fault in the front');
       plain(response, 500, 'Something broke on our side. Try again.');
     });
+  });
+  // What Node.js cannot read as a request never becomes one; its answer carries the same headers all the same.
+  server.on('clientError', (error: NodeJS.ErrnoException, socket) => {
+    if (!socket.writable) return void socket.destroy();
+    const lines = headers.map(([name, value]) => `${name}: ${value}\r\n`).join('');
+    socket.end(`HTTP/1.1 ${UNREADABLE[error.code ?? ''] ?? '400 Bad Request'}\r\n${lines}${NOTHING_MORE}`);
   });
   server.headersTimeout = 20_000;
   server.requestTimeout = 60_000;
