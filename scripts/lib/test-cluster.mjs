@@ -39,7 +39,8 @@ export async function startTestCluster() {
   const folder = join(TEST_FOLDER, `integration-${process.pid}`);
   mkdirSync(folder, { recursive: true });
   const secrets = demoSecrets(folder, makeSecrets);
-  const { ports } = await choosePorts({ database: 5522 });
+  // Each run looks from a place of its own, so that two that start together do not take the same port.
+  const { ports } = await choosePorts({ database: 5522 + (process.pid % 400) });
   const cluster = new Cluster({ programs, folder, password: secrets.database, fast: true });
   cluster.start(ports.database);
   return { address: cluster.url('').replace(/\/$/, ''), stop: () => discard(cluster, folder) };
