@@ -2,6 +2,7 @@ import { defineConfig } from 'vitest/config';
 
 /** Plain Vite, without Astro: no test renders a page here (the browser stories do), and the set-up takes a second, not twenty. */
 export default defineConfig({
+  resolve: { alias: { 'astro:middleware': 'astro/virtual-modules/middleware.js' } },
   test: {
     reporters: ['default'],
     env: {

@@ -1,10 +1,17 @@
 import { and, eq, gt, isNull, sql } from 'drizzle-orm';
-import type { AstroCookies } from 'astro';
+import type { AstroCookieSetOptions } from 'astro';
 import type { App } from '#server/app';
 import { AppError } from '#server/errors';
 import { invites, sessions, users } from '#server/db/schema/index';
 import { takeOrRefuse } from '#server/limits';
 import { callAuth, hashToken, SESSION_DAYS, sessionCookieName } from './config.ts';
+
+/** The part of Astro's cookies that signing in needs. */
+export interface CookieJar {
+  get(name: string): { value: string } | undefined;
+  set(name: string, value: string, options: AstroCookieSetOptions): void;
+  delete(name: string, options: AstroCookieSetOptions): void;
+}
 
 const ASK_COOKIE = 'newel-ask';
 const ASK_SECONDS = 600;
@@ -25,7 +32,7 @@ const form = (fields: Record<string, string>, cookie = ''): RequestInit => ({
  */
 export async function askForLink(
   app: App,
-  cookies: AstroCookies,
+  cookies: CookieJar,
   input: { address: string; next: string; clientIp: string },
 ): Promise<void> {
   const address = input.address.trim().toLowerCase();
@@ -49,7 +56,7 @@ export async function askForLink(
  */
 export async function spendLink(
   app: App,
-  cookies: AstroCookies,
+  cookies: CookieJar,
   input: { address: string; secret: string; clientIp: string; device: string },
 ): Promise<{ userId: string }> {
   await takeOrRefuse(app.limits, 'confirm-network', input.clientIp);
@@ -96,7 +103,7 @@ function sessionTokenOf(reply: Response, cookieName: string): string | null {
 
 const expiry = (app: App) => new Date(app.clock.now().getTime() + SESSION_DAYS * 86_400_000);
 
-function setSessionCookie(app: App, cookies: AstroCookies, token: string): void {
+function setSessionCookie(app: App, cookies: CookieJar, token: string): void {
   cookies.set(sessionCookieName(app.env.secure), token, {
     httpOnly: true,
     sameSite: 'lax',
@@ -126,7 +133,7 @@ async function acceptInvite(app: App, userId: string): Promise<void> {
 /** Demo only: signs one of the practice's people in by choice of name. @throws AppError not-found in production */
 export async function signInAsDemo(
   app: App,
-  cookies: AstroCookies,
+  cookies: CookieJar,
   userId: string,
   device: string,
 ): Promise<void> {
@@ -145,7 +152,7 @@ export async function signInAsDemo(
 }
 
 /** Ends the session that the cookie holds. */
-export async function signOut(app: App, cookies: AstroCookies): Promise<void> {
+export async function signOut(app: App, cookies: CookieJar): Promise<void> {
   const name = sessionCookieName(app.env.secure);
   const token = cookies.get(name)?.value;
   if (token) await app.db.delete(sessions).where(eq(sessions.sessionToken, hashToken(token)));
