@@ -61,6 +61,8 @@ function drawer(chance: Chance) {
 type Test = 'push-ups' | 'sit-ups' | 'stairs';
 const TESTS: readonly Test[] = ['sit-ups', 'push-ups', 'stairs'];
 const NOISE: Record<Test, number> = { 'push-ups': 0.07, 'sit-ups': 0.06, stairs: 0.03 };
+/** Even seven push-ups vary by one from day to day, in counts. */
+const LEAST_SPREAD = 1;
 /** How much of a gain in ability each test shows: stairs move less than push-ups. */
 const GAIN: Record<Test, number> = { 'push-ups': 1.6, 'sit-ups': 0.9, stairs: 0.5 };
 
@@ -73,10 +75,9 @@ function markOf(
 ): Insert<typeof schema.marks> {
   const { person, chance } = frame;
   const start = person.start[{ 'push-ups': 0, 'sit-ups': 1, stairs: 2 }[test]] ?? 10;
-  const value = Math.max(
-    1,
-    Math.round(start * (1 + (ability - 1) * GAIN[test]) * chance.normal(1, NOISE[test])),
-  );
+  const expected = start * (1 + (ability - 1) * GAIN[test]);
+  const spread = Math.max(LEAST_SPREAD, expected * NOISE[test]);
+  const value = Math.max(1, Math.round(chance.normal(expected, spread)));
   return {
     id: chance.uuid(),
     memberId: frame.memberId,
