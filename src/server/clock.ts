@@ -23,3 +23,6 @@ export class MovingClock implements Clock {
     return Math.round(this.offsetMs / 1000);
   }
 }
+
+/** Recognises the demo's clock across the two bundles (front and pages), where `instanceof` cannot. */
+export const isMovingClock = (clock: Clock): clock is MovingClock => 'advance' in clock;

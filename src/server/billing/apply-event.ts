@@ -1,4 +1,4 @@
-import { eq } from 'drizzle-orm';
+import { and, eq, inArray, isNull } from 'drizzle-orm';
 import type Stripe from 'stripe';
 import { formatDay } from '#domain/numbers/format';
 import { GRACE_DAYS } from '#domain/access/access-of';
@@ -76,13 +76,31 @@ async function tell(app: App, event: { type: string; objectId: string }, custome
   });
 }
 
-/** Job: reads the event's customer anew, writes the mirror, tells the member. May run twice. */
+/**
+ * Job: reads the event's customer anew, writes the mirror, tells the member. Everything that has come about that customer by
+ * then is settled with it, so a burst of events is one reading. May run twice.
+ */
 export async function applyPaymentEvent(app: App, eventId: string): Promise<void> {
   const [event] = await app.db.select().from(stripeEvents).where(eq(stripeEvents.id, eventId));
   if (!event || event.appliedAt) return;
-  if (event.customerId) {
-    await syncCustomer(app, event.customerId);
-    await tell(app, event, event.customerId);
+  const { customerId } = event;
+  const pending = customerId
+    ? await app.db
+        .select()
+        .from(stripeEvents)
+        .where(and(eq(stripeEvents.customerId, customerId), isNull(stripeEvents.appliedAt)))
+    : [event];
+  if (customerId) {
+    await syncCustomer(app, customerId);
+    for (const one of pending) await tell(app, one, customerId);
   }
-  await app.db.update(stripeEvents).set({ appliedAt: app.clock.now() }).where(eq(stripeEvents.id, eventId));
+  await app.db
+    .update(stripeEvents)
+    .set({ appliedAt: app.clock.now() })
+    .where(
+      inArray(
+        stripeEvents.id,
+        pending.map(({ id }) => id),
+      ),
+    );
 }

@@ -2,7 +2,7 @@ import type { App } from '#server/app';
 import { applyPaymentEvent } from '#server/billing/apply-event';
 import { sendMail } from '#server/email/send';
 import { preparePhoto } from '#server/services/photos';
-import type { JobPayloads, QueueName } from './queues.ts';
+import { BATCH, SIDE_BY_SIDE, type JobPayloads, type QueueName } from './queues.ts';
 import { runTick } from './tick.ts';
 
 type Handler<Q extends QueueName> = (app: App, payload: JobPayloads[Q]) => Promise<void>;
@@ -20,23 +20,26 @@ const TICK_CRON = '* * * * *';
 export async function startWorker(app: App): Promise<void> {
   const work = async <Q extends QueueName>(queue: Q) => {
     const handle: Handler<Q> = HANDLERS[queue];
-    await app.boss.work<JobPayloads[Q]>(queue, { pollingIntervalSeconds: 0.5 }, async (jobs) => {
-      for (const job of jobs) {
-        try {
-          await handle(app, job.data);
-        } catch (error) {
-          app.log.warn(
-            { queue, job: job.id, fault: error instanceof Error ? error.message : 'unknown' },
-            'job failed',
-          );
-          throw error;
+    await app.boss.work<JobPayloads[Q]>(
+      queue,
+      { pollingIntervalSeconds: 0.5, batchSize: BATCH[queue] },
+      async (jobs) => {
+        for (const job of jobs) {
+          try {
+            await handle(app, job.data);
+          } catch (error) {
+            app.log.warn(
+              { queue, job: job.id, fault: error instanceof Error ? error.message : 'unknown' },
+              'job failed',
+            );
+            throw error;
+          }
         }
-      }
-    });
+      },
+    );
   };
-  await work('mail');
-  await work('payment-event');
-  await work('photo');
-  await work('tick');
+  for (const queue of Object.keys(HANDLERS) as QueueName[]) {
+    for (let side = 0; side < SIDE_BY_SIDE[queue]; side += 1) await work(queue);
+  }
   await app.boss.schedule('tick', TICK_CRON, {});
 }

@@ -15,7 +15,8 @@ test('the main loop: join, get cleared, test, train, check in, be answered, test
   browser,
   page,
 }, info) => {
-  const address = `${info.project.name}-${Date.now()}@skerrow.example`;
+  const name = `Story ${Date.now().toString(36)}`;
+  const address = `${name.toLowerCase().replace(' ', '-')}@skerrow.example`;
   const width = info.project.name.replace('story-', '');
   let picture = 0;
   const snap = async (name: string, of: Page = page) => {
@@ -92,7 +93,7 @@ test('the main loop: join, get cleared, test, train, check in, be answered, test
     const served = await (await page.request.get((await photo.getAttribute('src')) ?? '')).body();
     expect((await sharp(served).metadata()).exif).toBeUndefined();
     await page.goto('/account');
-    await page.getByLabel('Name').fill(`Story ${width}`);
+    await page.getByLabel('Name').fill(name);
     await page.getByLabel('Date of birth').fill('7 Nov 1990');
     await choose(page, /^Sex/, 'Female');
     await page.getByRole('button', { name: 'Keep this' }).click();
@@ -103,23 +104,21 @@ test('the main loop: join, get cleared, test, train, check in, be answered, test
   await test.step('the coach finds it in the queue, answers and changes a target', async () => {
     for (const coach of ['Odile Brandt', 'Tomasz Wren']) {
       await signInAs(coachPage, coach);
-      if (await coachPage.getByRole('link', { name: new RegExp(`Story ${width}`) }).count()) break;
+      if (await coachPage.getByRole('link', { name: new RegExp(name) }).count()) break;
       await coachPage.context().clearCookies();
     }
     await snap('desk', coachPage);
     await coachPage
-      .getByRole('link', { name: new RegExp(`Story ${width}`) })
+      .getByRole('link', { name: new RegExp(name) })
       .first()
       .click();
     await ready(coachPage);
     await expect(coachPage.getByText('the last one before breakfast').first()).toBeVisible();
     await coachPage.getByText('Change it in red').first().click();
-    await coachPage
-      .getByLabel(/^A set/)
-      .first()
-      .fill('7');
-    await coachPage.getByLabel('Why').first().fill('Seven straight ones beat nine crooked ones.');
-    await coachPage.getByRole('button', { name: 'Write it in red' }).first().click();
+    const red = coachPage.locator('form:has([name=do][value=target])').first();
+    await red.getByLabel(/^A set/).fill('7');
+    await red.getByLabel('Why').fill('Seven straight ones beat nine crooked ones.');
+    await red.getByRole('button', { name: 'Write it in red' }).click();
     await expect(coachPage.getByText('Written in red.')).toBeVisible();
     await ready(coachPage);
     await coachPage
@@ -142,8 +141,15 @@ test('the main loop: join, get cleared, test, train, check in, be answered, test
 
   await test.step('three weeks on is the landing: the change is judged', async () => {
     await moveClock(page, 22);
-    await page.goto('/week');
-    await expect(page.getByRole('heading', { name: 'The fourth tread' })).toBeVisible();
+    await expect
+      .poll(
+        async () => {
+          await page.goto('/week');
+          return page.getByRole('heading', { name: 'The fourth tread' }).count();
+        },
+        { timeout: 60_000, message: 'the renewal is written down' },
+      )
+      .toBe(1);
     await takeTestDay(page, { sitUps: '31', pushUps: '19', stairs: '131' });
     await page.goto('/marks');
     await expect(page.getByText(/better\.|No real change yet\.|Too early to say\./).first()).toBeVisible();
