@@ -1,4 +1,5 @@
 import { beforeAll, describe, expect, it } from 'vitest';
+import type { App } from '#server/app';
 import { auditEntries, invites, invoices, practice, subscriptions } from '#server/db/schema/index';
 import { caseload } from '#server/services/caseload';
 import { incomeByMonth, membersByState, planStretches } from '#server/services/income';
@@ -98,13 +99,22 @@ describe('people', () => {
   });
 });
 
+type Room = (app: App, viewer: Viewer) => unknown;
+const enter = async (room: Room, viewer: Viewer) => room(world.app, viewer);
+
 describe('roles', () => {
   it('keeps the owner’s rooms to the owner, and the desk to coaches', async () => {
     const member = await addMember(world.app, { coach });
-    const rooms = [incomeByMonth, membersByState, planStretches, listCoaches, listMembers, openInvites];
+    const rooms: Room[] = [
+      incomeByMonth,
+      membersByState,
+      planStretches,
+      listCoaches,
+      listMembers,
+      openInvites,
+    ];
     for (const viewer of [coach, member]) {
-      for (const room of rooms)
-        expect(await codeOf(Promise.resolve().then(() => room(world.app, viewer)))).toBe('forbidden');
+      for (const room of rooms) expect(await codeOf(enter(room, viewer))).toBe('forbidden');
       expect(await codeOf(inviteCoach(world.app, viewer, { name: 'X', address: 'x@y.example' }))).toBe(
         'forbidden',
       );
