@@ -67,7 +67,9 @@ async function save(key: string, body: DraftBody, say: (words: string) => void):
       body: JSON.stringify({ body }),
     });
     if (!reply.ok) throw new Error(String(reply.status));
-    localStorage.removeItem(`draft ${key}`);
+    // What was typed while this was on its way stays on the device until it has gone up too.
+    if (localStorage.getItem(`draft ${key}`) === JSON.stringify(body))
+      localStorage.removeItem(`draft ${key}`);
     const time = new Date().toLocaleTimeString('en-GB', { hour: '2-digit', minute: '2-digit' });
     say(`Draft kept ${time}`);
   } catch {

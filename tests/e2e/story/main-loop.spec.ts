@@ -3,6 +3,7 @@ import sharp from 'sharp';
 import { choose, letterTo, moveClock, ready, signInAs } from '../support/people.ts';
 import {
   answerReadiness,
+  changeCard,
   join,
   logSession,
   measureHouse,
@@ -160,8 +161,7 @@ test('the main loop: join, get cleared, test, train, check in, be answered, test
     await page.goto('/account/membership');
     await page.getByRole('button', { name: 'Card and invoices' }).click();
     await page.waitForURL(/\/portal\//);
-    await page.locator('input[name=card][value=fails-later]').check();
-    await page.locator('button[value=card]').click();
+    await changeCard(page, 'fails-later');
     await moveClock(page, 28);
     await expect
       .poll(
@@ -189,8 +189,7 @@ test('the main loop: join, get cleared, test, train, check in, be answered, test
     await expect(page).toHaveURL(/\/account\/membership/);
     await page.getByRole('button', { name: 'Put another card in' }).click();
     await page.waitForURL(/\/portal\//);
-    await page.locator('input[name=card][value=succeeds]').check();
-    await page.locator('button[value=card]').click();
+    await changeCard(page, 'succeeds');
     await expect
       .poll(
         async () => {

@@ -100,3 +100,13 @@ export const pictureWithPlace = (): Promise<Buffer> =>
     })
     .jpeg()
     .toBuffer();
+
+/** Puts another card on file in the payment stand-in's portal. */
+export async function changeCard(page: Page, card: 'succeeds' | 'fails-later'): Promise<void> {
+  await page.waitForURL(/\/portal\//);
+  const form = page.locator('form:has(input[name=card])');
+  if (!(await form.isVisible())) await page.locator('details:has(input[name=card]) > summary').click();
+  await form.locator(`input[name=card][value=${card}]`).check();
+  await form.getByRole('button').click();
+  await expect(page.locator('main')).toContainText(/card/i);
+}
