@@ -6,8 +6,7 @@ export default defineConfig({
   test: {
     reporters: ['default'],
     env: {
-      AWS_JS_NODE_VERSION_SUPPORT_WARNING_DISABLED: '1',
-      AWS_SDK_JS_NODE_VERSION_SUPPORT_WARNING_DISABLED: '1',
+      AWS_SDK_JS_NODE_VERSION_SUPPORT_WARNING_DISABLED: 'true',
     },
     projects: [
       {

@@ -29,8 +29,7 @@ export function environment({ ports, secrets, databaseUrl, fakesUrl, folder }) {
     S3_ACCESS_KEY: 'demo',
     S3_SECRET_KEY: secrets.store,
     INBOX_URL: local(ports.inbox),
-    AWS_JS_NODE_VERSION_SUPPORT_WARNING_DISABLED: '1',
-    AWS_SDK_JS_NODE_VERSION_SUPPORT_WARNING_DISABLED: '1',
+    AWS_SDK_JS_NODE_VERSION_SUPPORT_WARNING_DISABLED: 'true',
   };
   const fakes = {
     ...product,

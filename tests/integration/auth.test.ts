@@ -177,14 +177,12 @@ describe('the link', () => {
 
   it('makes a coach of an invited address, once', async () => {
     const owner = await addPerson(world.app, 'owner');
-    await world.app.db
-      .insert(invites)
-      .values({
-        email: 'Coach@skerrow.example',
-        name: 'Odile Brandt',
-        invitedBy: owner.id,
-        createdAt: world.clock.now(),
-      });
+    await world.app.db.insert(invites).values({
+      email: 'Coach@skerrow.example',
+      name: 'Odile Brandt',
+      invitedBy: owner.id,
+      createdAt: world.clock.now(),
+    });
     const browser = await signedIn('coach@skerrow.example');
     expect(await browser.viewer()).toMatchObject({ role: 'coach', name: 'Odile Brandt' });
     const [spent] = await world.app.db
