@@ -68,6 +68,35 @@ describe('income', () => {
     const stretch = (await planStretches(world.app, owner)).find(({ memberId }) => memberId === leaver.id);
     expect(stretch).toMatchObject({ from: '2026-08-10', endedOn: '2026-10-10', failed: false });
   });
+
+  it('reaches back to what was paid before the provider’s books begin, in the first stretch alone', async () => {
+    const member = await addMember(world.app, { coach, plan: false });
+    const day = (text: string) => new Date(`${text}T12:00:00Z`);
+    const plan = (id: string, from: string, endedAt: Date | null) => ({
+      id,
+      memberId: member.id,
+      status: endedAt ? ('canceled' as const) : ('active' as const),
+      startedAt: day(from),
+      currentPeriodStart: day(from),
+      currentPeriodEnd: day('2026-12-01'),
+      endedAt,
+      syncedAt: day(from),
+    });
+    await world.app.db
+      .insert(subscriptions)
+      .values([plan('sub_a', '2026-06-01', day('2026-07-01')), plan('sub_b', '2026-11-01', null)]);
+    const bill = {
+      memberId: member.id,
+      status: 'paid' as const,
+      amountMinor: 3900,
+      paidMinor: 3900,
+      currency: 'gbp',
+    };
+    const paidAt = day('2026-03-08');
+    await world.app.db.insert(invoices).values({ ...bill, id: 'in_past', issuedAt: paidAt, paidAt });
+    const mine = (await planStretches(world.app, owner)).filter(({ memberId }) => memberId === member.id);
+    expect(mine.map(({ from }) => from)).toEqual(['2026-03-08', '2026-11-01']);
+  });
 });
 
 describe('people', () => {

@@ -23,6 +23,10 @@ export interface MonthIncome extends Record<string, unknown> {
 export const LEDGER_MONTHS = 12;
 /** A checkout that was never finished is no plan. */
 const BEGUN = sql`status not in ('incomplete', 'incomplete_expired')`;
+/** Every stretch of a plan. The first of a member reaches back to what they paid before the provider's books begin. */
+const STRETCHES = sql`(select s.*, least(started_at, case when started_at = min(started_at) over (partition by member_id)
+  then (select min(issued_at) from invoices i where i.member_id = s.member_id) end) as began_at
+  from subscriptions s where ${BEGUN})`;
 
 /** Money, members and leavings month by month, newest first, summed by the database. Owner only. */
 export async function incomeByMonth(app: App, viewer: Viewer): Promise<MonthIncome[]> {
@@ -30,6 +34,7 @@ export async function incomeByMonth(app: App, viewer: Viewer): Promise<MonthInco
   const now = app.clock.now().toISOString();
   const { rows } = await app.db.execute<MonthIncome>(sql`
     with home as (select coalesce((select time_zone from practice where id = 1), 'Europe/London') as zone),
+    stretches as materialized ${STRETCHES},
     months as (select first, first at time zone zone as opens, (first + interval '1 month') at time zone zone as closes
       from home, generate_series(date_trunc('month', ${now}::timestamptz at time zone zone)
         - make_interval(months => ${LEDGER_MONTHS - 1}),
@@ -41,9 +46,9 @@ export async function incomeByMonth(app: App, viewer: Viewer): Promise<MonthInco
         where status = 'open' and issued_at >= opens and issued_at < closes) as "openMinor",
       (select count(*)::int from invoices
         where status <> 'draft' and issued_at >= opens and issued_at < closes) as invoices,
-      (select count(distinct member_id)::int from subscriptions where ${BEGUN}
-        and started_at < least(closes, ${now}::timestamptz) and (ended_at is null or ended_at >= opens)) as members,
-      (select count(*)::int from subscriptions where ${BEGUN} and ended_at >= opens and ended_at < closes) as ended
+      (select count(distinct member_id)::int from stretches
+        where began_at < least(closes, ${now}::timestamptz) and (ended_at is null or ended_at >= opens)) as members,
+      (select count(*)::int from stretches where ended_at >= opens and ended_at < closes) as ended
     from months order by first desc`);
   return rows;
 }
@@ -83,15 +88,15 @@ export async function planStretches(app: App, viewer: Viewer): Promise<PlanStret
   const { rows } = await app.db.execute<PlanStretch>(sql`
     with home as (select coalesce((select time_zone from practice where id = 1), 'Europe/London') as zone)
     select s.member_id as "memberId", coalesce(u.name, u.email) as name,
-      to_char(s.started_at at time zone zone, 'YYYY-MM-DD') as "from",
+      to_char(s.began_at at time zone zone, 'YYYY-MM-DD') as "from",
       to_char(s.trial_end at time zone zone, 'YYYY-MM-DD') as "trialUntil",
       to_char(s.ended_at at time zone zone, 'YYYY-MM-DD') as "endedOn",
       to_char(s.past_due_since at time zone zone, 'YYYY-MM-DD') as "failedOn",
       s.past_due_since is not null and s.ended_at is null as failed,
       p.amount_minor as "amountMinor", p.currency
-    from home, subscriptions s join users u on u.id = s.member_id left join plans p on p.id = s.plan_id
-    where ${BEGUN} and s.started_at <= ${now}::timestamptz
+    from home, ${STRETCHES} s join users u on u.id = s.member_id left join plans p on p.id = s.plan_id
+    where s.began_at <= ${now}::timestamptz
       and (s.ended_at is null or s.ended_at >= ${now}::timestamptz - make_interval(months => ${LEDGER_MONTHS}))
-    order by s.started_at, s.id`);
+    order by s.began_at, s.id`);
   return rows;
 }
