@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import { z } from './zod.ts';
 import { optional, typedCount, typedDate } from './typed-number.ts';
 
 const WANTS = ['reminders', 'letter', 'body'] as const;

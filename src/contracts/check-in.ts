@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import { z } from './zod.ts';
 import { pain, scale, words, type Pain } from './words.ts';
 
 /** The weekly check-in: scales from 1 to 5, effort from 1 to 10. */

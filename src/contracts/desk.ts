@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import { z } from './zod.ts';
 import { scale, words } from './words.ts';
 
 /** The coach's answer: to a check-in when one waits, else a line in the thread. */

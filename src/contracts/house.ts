@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import { z } from './zod.ts';
 import { optional, typedCount } from './typed-number.ts';
 
 const yes = z.union([z.literal('yes').transform(() => true), z.literal('no').transform(() => false)], {

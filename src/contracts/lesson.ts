@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import { z } from './zod.ts';
 import { words } from './words.ts';
 
 const LONGEST_PLACE = 120;

@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import { z } from './zod.ts';
 import { BENCHMARKS, isFormOf, limitProblem, TEST_IDS, type TestId } from '#domain/benchmark/tests';
 import { parseCount, parseDecimal, parseDuration } from '#domain/numbers/parse';
 import { pain, scale } from './words.ts';

@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import { z } from './zod.ts';
 
 /** The buttons of the membership page. */
 export const MembershipInput = z.strictObject({

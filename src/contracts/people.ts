@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import { z } from './zod.ts';
 import { address } from './sign-in.ts';
 
 export const InviteInput = z.strictObject({

@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import { z } from './zod.ts';
 import { typedCount, typedDecimal } from './typed-number.ts';
 
 /** The choice of a plan on the way to the checkout. */

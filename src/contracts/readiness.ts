@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import { z } from './zod.ts';
 import { NONE, QUESTIONS, type ReadinessAnswers } from '#domain/readiness/questions';
 
 /** The sentence that the person agrees to; kept with the consent. */

@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import { z } from './zod.ts';
 import { pain, scale } from './words.ts';
 
 /** A logged session: totals over all sets for each movement, and the whole session's effort, minutes and pain. */

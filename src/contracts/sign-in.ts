@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import { z } from './zod.ts';
 
 const NOT_AN_ADDRESS =
   'That does not look like an e-mail address. It needs an @ and an ending, like ines@skerrow.example.';

@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import { z } from './zod.ts';
 import { WARNING_SIGNS } from '#domain/readiness/screen';
 
 const IDS = WARNING_SIGNS.map(({ id }) => id) as [string, ...string[]];

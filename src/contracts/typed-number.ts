@@ -1,4 +1,4 @@
-import { z } from 'zod';
+import { z } from './zod.ts';
 import { parseCount, parseDate, parseDecimal } from '#domain/numbers/parse';
 
 interface Bounds {

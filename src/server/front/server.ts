@@ -3,6 +3,7 @@ import { createServer, type IncomingMessage, type Server, type ServerResponse } 
 import type { Log } from '#server/log';
 import { bodyLimit, countedBody, statedTooLarge } from './body.ts';
 import { clientAddress } from './client-address.ts';
+import { compressReply } from './compress.ts';
 import { mayAct } from './cross-site.ts';
 import { applyHeaders, cleanForAstro, securityHeaders, type HeaderPolicy } from './headers.ts';
 import { canonicalPath } from './path.ts';
@@ -115,6 +116,7 @@ export function createFront(options: FrontOptions): Front {
   ): Promise<void> {
     const clientIp = clientAddress(request, options.trustedProxies);
     cleanForAstro(request, clientIp);
+    compressReply(request, response);
     if (request.method !== 'GET' && request.method !== 'HEAD') {
       // Astro turns the throw into its error reply; the status is put right just before it goes out.
       let tooLarge = false;
