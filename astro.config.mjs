@@ -22,7 +22,12 @@ export default defineConfig({
   // Our front server checks the origin, then hands every request on as `localhost`, so a build serves any public origin.
   security: { checkOrigin: true, allowedDomains: [{ hostname: 'localhost' }] },
   integrations: [react(), mdx()],
-  vite: { plugins: [tailwindcss()], build: { assetsInlineLimit: 0 } },
+  vite: {
+    plugins: [tailwindcss()],
+    build: { assetsInlineLimit: 0 },
+    // The clusters' own files change all the time and are nobody's source; watching them runs out of file handles.
+    server: { watch: { ignored: ['**/.newel*/**'] } },
+  },
   experimental: {
     fonts: [
       face('Besley', { role: 'display', name: 'besley' }, '400 700', ['Georgia', 'serif']),
