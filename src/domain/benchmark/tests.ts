@@ -3,7 +3,7 @@ import { WAIST, WEIGHT } from './measures.ts';
 import { CHAIR_STAND, PLANK, PULL_UPS, PUSH_UPS, SIT_UPS } from './strength.ts';
 import type { Benchmark, TestId } from './types.ts';
 
-export type { Benchmark, BenchmarkUnit, TestForm, TestId } from './types.ts';
+export type { Benchmark, TestId } from './types.ts';
 
 /** Every benchmark, in the order in which a test day takes them. */
 export const BENCHMARKS: Readonly<Record<TestId, Benchmark>> = {

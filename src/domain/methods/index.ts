@@ -10,7 +10,7 @@ import { STANDING_METHODS } from '../standing/method.ts';
 import type { MethodEntry } from './types.ts';
 
 export { FLAG_SENTENCES } from './flags.ts';
-export type { Flag, MethodEntry, MethodExample, MethodSource } from './types.ts';
+export type { MethodEntry } from './types.ts';
 
 /** Every number that Newel works out, one entry each, in the order in which the methods page lists them. */
 export const METHODS: readonly MethodEntry[] = [

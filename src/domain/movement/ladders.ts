@@ -10,7 +10,7 @@ import {
 } from './rungs.ts';
 import type { Kit, Ladder, MovementId, Rung } from './types.ts';
 
-export type { Kit, Ladder, MovementId, Rung, Unit, WeightShare } from './types.ts';
+export type { Kit, Ladder, MovementId, Rung, Unit } from './types.ts';
 
 /** Every movement with its rungs, easiest first. The order is common practice, no source. */
 export const LADDERS: Readonly<Record<MovementId, Ladder>> = {

@@ -1,7 +1,7 @@
 import { compareReasons, reasonsFor } from './reasons.ts';
 import type { QueueEntry, QueueFacts, QueueKind, QueueReason, ReasonCode } from './types.ts';
 
-export type { QueueEntry, QueueFacts, QueueKind, QueueReason, ReasonCode } from './types.ts';
+export type { QueueEntry, QueueFacts } from './types.ts';
 
 const KINDS: Readonly<Record<ReasonCode, QueueKind>> = {
   'warning-sign': 'stop',

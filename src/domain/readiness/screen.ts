@@ -2,7 +2,7 @@ import { DateTime } from 'luxon';
 import { MINIMUM_AGE } from '../minimum-age.ts';
 import { NONE, type ReadinessAnswers } from './questions.ts';
 
-export { PREGNANCY_STOP_SIGNS, STOP_SIGNS, WARNING_SIGNS, type WarningSign } from './signs.ts';
+export { STOP_SIGNS, WARNING_SIGNS } from './signs.ts';
 
 /** Clear: begin. Gentle: begin light to moderate. Doctor: the plan is held until a clearance is recorded. */
 export type ScreenResult = 'clear' | 'gentle' | 'doctor';

@@ -28,8 +28,6 @@ export const WARNING_SIGNS = [
   { id: 'pale', label: 'Pale, cold and clammy, or blue lips' },
 ] as const satisfies readonly Sign[];
 
-export type WarningSign = (typeof WARNING_SIGNS)[number]['id'];
-
 /**
  * When to stop, shown on every session and test. The published list (Exercise testing, PMC10847087 table 2;
  * palpitations: memory), in our own words.

@@ -1,4 +1,4 @@
-import { and, desc, eq } from 'drizzle-orm';
+import { and, eq } from 'drizzle-orm';
 import type { CheckInInput } from '#contracts/check-in';
 import type { App } from '#server/app';
 import type { Transaction } from '#server/db/client';
@@ -17,15 +17,6 @@ export async function readCheckIn(app: App, memberId: string, weekStart: string)
     .where(and(eq(checkIns.memberId, memberId), eq(checkIns.weekStart, weekStart)));
   return row ?? null;
 }
-
-/** The newest check-ins of a member, newest first. */
-export const listCheckIns = (app: App, memberId: string, limit = 12) =>
-  app.db
-    .select()
-    .from(checkIns)
-    .where(eq(checkIns.memberId, memberId))
-    .orderBy(desc(checkIns.sentAt))
-    .limit(limit);
 
 /**
  * Sends the week's check-in, once. Strong pain raises an alert at the coach's desk; the draft goes in the same transaction.

@@ -1,4 +1,4 @@
-import { and, desc, eq, inArray, isNull, sql } from 'drizzle-orm';
+import { and, desc, eq, isNull, sql } from 'drizzle-orm';
 import { alias } from 'drizzle-orm/pg-core';
 import { accessOf, type Access } from '#domain/access/access-of';
 import type { App } from '#server/app';
@@ -122,4 +122,3 @@ export async function leastLoadedCoach(app: App): Promise<string | null> {
 }
 
 export const LIVE_STATUSES = ['trialing', 'active', 'past_due'] as const;
-export const isLive = inArray(subscriptions.status, [...LIVE_STATUSES]);

@@ -1,15 +1,12 @@
-import { and, asc, desc, eq, isNull, sql } from 'drizzle-orm';
+import { and, asc, eq, isNull, sql } from 'drizzle-orm';
 import { BENCHMARKS, REQUIRED_TESTS, TEST_IDS, type TestId } from '#domain/benchmark/tests';
 import { FLIGHT_WEEKS, isLanding, localDate } from '#domain/flight/calendar';
-import type { App } from '#server/app';
 import type { Queryable, Transaction } from '#server/db/client';
 import { marks, testDays } from '#server/db/schema/index';
 import { AppError } from '#server/errors';
 import { currentFlight, flightPosition, startFlight } from './flights.ts';
 import type { MemberState } from './members.ts';
 import { planNextSession } from './training.ts';
-
-export type TestDayRow = typeof testDays.$inferSelect;
 
 /** What today's test day is: the baseline before the first flight, a landing, or none. */
 export type DueTestDay =
@@ -113,11 +110,3 @@ export async function finishTestDay(
   if (day.week === 0) await planNextSession(tx, state, now);
   return { week: day.week };
 }
-
-/** Finished test days of a member, newest first. */
-export const listTestDays = (app: App, memberId: string) =>
-  app.db
-    .select()
-    .from(testDays)
-    .where(and(eq(testDays.memberId, memberId), sql`${testDays.finishedAt} is not null`))
-    .orderBy(desc(testDays.takenOn));
