@@ -120,5 +120,3 @@ export async function leastLoadedCoach(app: App): Promise<string | null> {
     .limit(1);
   return row?.id ?? null;
 }
-
-export const LIVE_STATUSES = ['trialing', 'active', 'past_due'] as const;
