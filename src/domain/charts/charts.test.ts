@@ -2,62 +2,20 @@ import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { balustradeTable, drawBalustrade } from './balustrade.ts';
 import { drawFlightRows } from './flight-rows.ts';
-import { drawFlight, flightTable, type Flight } from './flight.ts';
+import { drawFlight, flightTable } from './flight.ts';
 import { drawJambRow } from './jamb-row.ts';
-import { drawJamb, jambTable, type Jamb } from './jamb.ts';
-import { drawLogo } from './logo.ts';
+import { drawJamb, jambTable } from './jamb.ts';
 import { drawPace, paceTable } from './pace.ts';
 import { countPegs, drawPegs, type Peg } from './pegs.ts';
 import { countPosts, type Post } from './posts.ts';
-import { drawScene, HALL_PHONE, HALL_WIDE } from './scene.ts';
+import { expectSound, flightOf, jambOf } from './test-kit.ts';
 import { drawTrend, niceSteps, trendTable } from './trend.ts';
 
-const HOSTILE = `"><script>alert(1)</script>&'`;
 const post = fc.oneof(
   fc.double({ min: -50, max: 400, noNaN: true }),
   fc.constantFrom<Post>('missed', 'to-come'),
 );
 const value = fc.double({ min: 0, max: 1000, noNaN: true });
-
-const jambOf = (over: Partial<Jamb> = {}): Jamb => ({
-  id: 'push-ups',
-  finding: 'Seventeen, twelve before: real.',
-  unit: 'push-ups',
-  marks: [
-    { value: 9, day: '12 Sep' },
-    { value: 12, day: '10 Oct' },
-    { value: 17, day: '7 Nov' },
-  ],
-  error: 3.4,
-  bands: [
-    { value: 8, word: 'fair' },
-    { value: 13, word: 'good' },
-  ],
-  aim: 19,
-  ...over,
-});
-
-const flightOf = (over: Partial<Flight> = {}): Flight => ({
-  finding: 'Week nine of twelve.',
-  here: 9,
-  weeks: Array.from({ length: 12 }, (_, index) => ({
-    week: index + 1,
-    title: `Lesson ${index + 1}`,
-    load: 300 + index * 10,
-    sessions: [100, 'missed', 80] as Post[],
-    landing: (index + 1) % 4 === 0 ? { day: '7 Nov' } : undefined,
-    href: `/flight#w${index + 1}`,
-  })),
-  ...over,
-});
-
-/** Every attribute value and every text of a drawing is well formed, without an element that was not meant. */
-function expectSound(markup: string): void {
-  expect(markup).not.toMatch(/NaN|Infinity|undefined|<script/);
-  const opened = [...markup.matchAll(/<([a-zA-Z]+)(?:\s[^<>]*)?(?<!\/)>/g)].map((tag) => tag[1]);
-  const closed = [...markup.matchAll(/<\/([a-zA-Z]+)>/g)].map((tag) => tag[1]);
-  expect([...opened].sort()).toEqual([...closed].sort());
-}
 
 describe('jamb', () => {
   it('draws no impossible number and stays well formed, whatever was marked', () => {
@@ -276,74 +234,5 @@ describe('trend, pace, balustrade, pegs', () => {
     expect(drawn.match(/<circle/g)).toHaveLength(7);
     expect(drawn.match(/<rect/g)).toHaveLength(1);
     expectSound(drawPegs({ finding: '', columns: [], months: 0 }, 'small'));
-  });
-});
-
-describe('all drawings', () => {
-  it('escape every word they are given', () => {
-    const posts: Post[] = [100, 'missed', 'to-come'];
-    const flight = flightOf({ finding: HOSTILE, hereWords: HOSTILE });
-    const weeks = flight.weeks.map((week) => ({
-      ...week,
-      title: HOSTILE,
-      landing: { day: HOSTILE },
-      note: HOSTILE,
-      href: HOSTILE,
-    }));
-    const marks = [
-      { value: 4, day: HOSTILE },
-      { value: 5, day: HOSTILE },
-    ];
-    const point = { at: 0, value: 1, day: HOSTILE };
-    for (const drawn of [
-      drawJamb(
-        jambOf({
-          id: HOSTILE,
-          finding: HOSTILE,
-          marks,
-          bands: [{ value: 1, word: HOSTILE }],
-          format: () => HOSTILE,
-        }),
-      ),
-      drawFlight({ ...flight, weeks }),
-      drawFlightRows({ ...flight, weeks }),
-      drawTrend({
-        finding: HOSTILE,
-        unit: HOSTILE,
-        points: [point],
-        bands: [],
-        ticks: [{ at: 0, label: HOSTILE }],
-        turns: [{ at: 0, word: HOSTILE, day: '' }],
-      }),
-      drawPace({ finding: HOSTILE, counts: [1] }),
-      drawBalustrade({
-        finding: HOSTILE,
-        weeks: [{ index: 0, label: HOSTILE, posts, load: 1 }],
-        mostLoad: 1,
-      }),
-      drawPegs({ finding: HOSTILE, columns: [['coach']], months: 1 }, 'middle'),
-      drawScene({ ...HALL_WIDE, jamb: { x: 0, marks: [{ y: 1, day: HOSTILE }] } }),
-      drawLogo(HOSTILE),
-    ]) {
-      expectSound(drawn);
-    }
-  });
-
-  it('carry their finding as the one name of one tab stop', () => {
-    for (const drawn of [
-      drawJamb(jambOf({ finding: 'Real.' })),
-      drawFlight(flightOf({ finding: 'Real.' })),
-    ]) {
-      expect(drawn.match(/tabindex="0"/g)).toHaveLength(1);
-      expect(drawn).toMatch(/^<svg [^>]*role="img"[^>]*aria-label="Real\."/);
-    }
-  });
-
-  it('leave the scene out of the reading order', () => {
-    for (const scene of [HALL_WIDE, HALL_PHONE]) {
-      const drawn = drawScene(scene);
-      expectSound(drawn);
-      expect(drawn).toContain('aria-hidden="true"');
-    }
   });
 });
