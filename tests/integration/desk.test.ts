@@ -1,7 +1,7 @@
 import { and, eq, isNull } from 'drizzle-orm';
 import { beforeAll, describe, expect, it, vi } from 'vitest';
 import { AnswerInput } from '#contracts/desk';
-import { alerts, auditEntries, checkIns, drafts, holds, messages } from '#server/db/schema/index';
+import { alerts, auditEntries, checkIns, drafts, holds, marks, messages } from '#server/db/schema/index';
 import { once } from '#server/once';
 import { answerMember, queueFor, rackOf, settleAlerts } from '#server/services/desk';
 import { saveDraft } from '#server/services/drafts';
@@ -213,5 +213,29 @@ describe('hold, clear and settle', () => {
     expect(await reasonsOf(coach, member)).toBeUndefined();
     const lines = await world.app.db.select().from(auditEntries).where(eq(auditEntries.subjectId, member.id));
     expect(lines.map(({ action }) => action)).toEqual(['settled an alert']);
+  });
+});
+
+describe('a drop', () => {
+  const DAY_HOURS = 24;
+  const marksOf = async (member: Viewer, values: readonly number[]) =>
+    world.app.db.insert(marks).values(
+      values.map((value, index) => ({
+        memberId: member.id,
+        test: 'push-ups',
+        form: 'floor',
+        value,
+        takenAt: hoursAgo((values.length - index) * 7 * DAY_HOURS),
+      })),
+    );
+
+  it.each([
+    ['a fall far beyond the error', [24, 25, 24, 25, 24, 12, 11, 12], true],
+    ['a fall within the error', [24, 25, 24, 25, 24, 23, 24, 23], false],
+    ['a rise', [12, 13, 12, 14, 18, 20, 21, 22], false],
+  ])('%s', async (_, values, expected) => {
+    const member = await addMember(world.app, { coach });
+    await marksOf(member, values);
+    expect((await reasonsOf(coach, member))?.includes('real-drop') ?? false).toBe(expected);
   });
 });

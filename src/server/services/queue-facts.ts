@@ -1,7 +1,8 @@
 import { and, gte, inArray, isNull, sql } from 'drizzle-orm';
 import { accessOf } from '#domain/access/access-of';
-import { BENCHMARKS, isTestId } from '#domain/benchmark/tests';
+import { BENCHMARKS, isTestId, type TestId } from '#domain/benchmark/tests';
 import { judgeChange } from '#domain/change/judge-change';
+import { priorTypicalError } from '#domain/change/test-errors';
 import { daysBetween, FLIGHT_WEEKS, isLanding, localDate, weekOfFlight } from '#domain/flight/calendar';
 import type { QueueFacts } from '#domain/queue/rank-queue';
 import type { App } from '#server/app';
@@ -75,14 +76,20 @@ type MarkRow = {
   testDayId: string | null;
 };
 
+/** Whether the last mark lies below by the test's own error; only then is the model asked, which takes a millisecond. */
+function fellByError(test: TestId, before: number, now: number): boolean {
+  const fall = BENCHMARKS[test].better === 'less' ? now - before : before - now;
+  return fall >= priorTypicalError(test, before);
+}
+
 /** The first test that really dropped against the test day before, in words. */
 function dropOf(rows: readonly MarkRow[]): QueueFacts['realDrop'] {
   for (const test of new Set(rows.map((row) => row.test))) {
     if (!isTestId(test) || BENCHMARKS[test].better === 'neither') continue;
     const mine = rows.filter((row) => row.test === test);
     const days = mine.filter((row) => row.testDayId !== null);
-    const since = (days.at(-2) ?? mine[0])?.takenAt;
-    if (mine.length < 3 || !since) continue;
+    const [since, last] = [days.at(-2) ?? mine[0], mine.at(-1)];
+    if (mine.length < 3 || !since || !last || !fellByError(test, since.value, last.value)) continue;
     const { verdict, sentence } = judgeChange({
       testId: test,
       better: BENCHMARKS[test].better === 'less' ? 'less' : 'more',
@@ -91,7 +98,7 @@ function dropOf(rows: readonly MarkRow[]): QueueFacts['realDrop'] {
         value: row.value,
         form: row.form,
       })),
-      since: since.getTime() / DAY_MS,
+      since: since.takenAt.getTime() / DAY_MS,
     });
     if (verdict === 'really lower') return { test: BENCHMARKS[test].name.toLowerCase(), sentence };
   }
