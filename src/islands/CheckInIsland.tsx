@@ -10,6 +10,8 @@ import { TextField } from './ui/TextField.tsx';
 import { Tread } from './ui/Tread.tsx';
 
 interface Props {
+  /** Who writes. */
+  owner: string;
   draftKey: string;
   draft: DraftBody | null;
   coach: string;
@@ -42,8 +44,8 @@ const PAIN = [
 ];
 
 /** The weekly check-in. Every key press is kept; sending twice with one key stores once. */
-export default function CheckInIsland({ draftKey, draft, coach }: Props) {
-  const { values, set, kept, drop } = useDraft(draftKey, { ...EMPTY, ...draft });
+export default function CheckInIsland({ owner, draftKey, draft, coach }: Props) {
+  const { values, set, kept, drop } = useDraft(owner, draftKey, { ...EMPTY, ...draft });
   const [errors, setErrors] = useState<Record<string, string>>({});
   const [busy, setBusy] = useState(false);
   const key = useRef('');

@@ -10,6 +10,8 @@ import { TextField } from './ui/TextField.tsx';
 import { Tread } from './ui/Tread.tsx';
 
 interface Props {
+  /** The coach who writes. */
+  owner: string;
   memberId: string;
   name: string;
   draft: DraftBody | null;
@@ -33,10 +35,10 @@ function stepOf(event: globalThis.KeyboardEvent): -1 | 0 | 1 {
   return event.key === 'j' ? 1 : event.key === 'k' ? -1 : 0;
 }
 
-function Answer({ memberId, name, draft, rack, rackAt }: Props) {
+function Answer({ owner, memberId, name, draft, rack, rackAt }: Props) {
   const client = useQueryClient();
   const letters = useRack(rack, rackAt);
-  const { values, set, kept, drop } = useDraft(`answer:${memberId}`, { words: '', ...draft });
+  const { values, set, kept, drop } = useDraft(owner, `answer:${memberId}`, { words: '', ...draft });
   const [fault, setFault] = useState('');
   const key = useRef('');
   const root = useRef<HTMLDivElement>(null);

@@ -7,14 +7,16 @@ import { Status } from './ui/Status.tsx';
 import { TextField } from './ui/TextField.tsx';
 
 interface Props {
+  /** Who writes. */
+  owner: string;
   draftKey: string;
   draft: DraftBody | null;
   coach: string;
 }
 
 /** A line to the coach between two check-ins. */
-export default function MessageIsland({ draftKey, draft, coach }: Props) {
-  const { values, set, kept, drop } = useDraft(draftKey, { words: '', ...draft });
+export default function MessageIsland({ owner, draftKey, draft, coach }: Props) {
+  const { values, set, kept, drop } = useDraft(owner, draftKey, { words: '', ...draft });
   const [fault, setFault] = useState('');
   const [busy, setBusy] = useState(false);
   const key = useRef('');

@@ -180,7 +180,7 @@ describe('logging', () => {
     const member = await beginner();
     const session = await planned(world.app, member);
     const tries = [100, 110].map((share) => codeOf(send(member, session, world.app.random.uuid(), share)));
-    expect((await Promise.all(tries)).sort()).toEqual(['none', 'not-found']);
+    expect((await Promise.all(tries)).sort()).toEqual(['conflict', 'none']);
     const rows = await world.app.db
       .select()
       .from(trainingSessions)

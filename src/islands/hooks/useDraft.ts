@@ -5,9 +5,9 @@ const SAVE_AFTER_MS = 800;
 export type DraftBody = Record<string, string | number | null>;
 
 /** Reads a copy kept on this device for when the line was down. */
-function readLocal<T extends DraftBody>(key: string): T | null {
+function readLocal<T extends DraftBody>(place: string): T | null {
   try {
-    return JSON.parse(localStorage.getItem(`draft ${key}`) ?? 'null') as T | null;
+    return JSON.parse(localStorage.getItem(place) ?? 'null') as T | null;
   } catch {
     return null;
   }
@@ -15,34 +15,37 @@ function readLocal<T extends DraftBody>(key: string): T | null {
 
 /**
  * Form contents that outlive a reload and a lost line. They go to the server shortly after the last key press; until the
- * server has them, a copy stays on this device and is preferred at the next opening.
+ * server has them, a copy stays on this device and is preferred at the next opening. A household may share the device: the
+ * copy is the owner's alone.
+ * @param owner id of who writes
  * @returns the values, a setter for one field, what to say about keeping them, and `drop` for after the sending
  */
-export function useDraft<T extends DraftBody>(key: string, start: T) {
+export function useDraft<T extends DraftBody>(owner: string, key: string, start: T) {
+  const place = `draft ${owner} ${key}`;
   const [values, setValues] = useState(start);
   const [kept, setKept] = useState('');
   const changed = useRef(false);
 
   useEffect(() => {
-    const local = readLocal<T>(key);
+    const local = readLocal<T>(place);
     if (local) {
       setValues((before) => ({ ...before, ...local }));
       changed.current = true;
     }
-  }, [key]);
+  }, [place]);
 
   useEffect(() => {
     if (!changed.current) return;
-    localStorage.setItem(`draft ${key}`, JSON.stringify(values));
+    localStorage.setItem(place, JSON.stringify(values));
     // Words that were sent meanwhile are no draft any more.
-    const timer = setTimeout(() => changed.current && void save(key, values, setKept), SAVE_AFTER_MS);
-    const again = () => void save(key, values, setKept);
+    const timer = setTimeout(() => changed.current && void save(place, key, values, setKept), SAVE_AFTER_MS);
+    const again = () => void save(place, key, values, setKept);
     window.addEventListener('online', again);
     return () => {
       clearTimeout(timer);
       window.removeEventListener('online', again);
     };
-  }, [key, values]);
+  }, [place, key, values]);
 
   return {
     values,
@@ -53,12 +56,17 @@ export function useDraft<T extends DraftBody>(key: string, start: T) {
     },
     drop: () => {
       changed.current = false;
-      localStorage.removeItem(`draft ${key}`);
+      localStorage.removeItem(place);
     },
   };
 }
 
-async function save(key: string, body: DraftBody, say: (words: string) => void): Promise<void> {
+async function save(
+  place: string,
+  key: string,
+  body: DraftBody,
+  say: (words: string) => void,
+): Promise<void> {
   try {
     // A key is letters, digits, hyphens and one colon, which stands in a path as it is; `%3A` would be another spelling.
     const reply = await fetch(`/api/drafts/${key}`, {
@@ -68,8 +76,7 @@ async function save(key: string, body: DraftBody, say: (words: string) => void):
     });
     if (!reply.ok) throw new Error(String(reply.status));
     // What was typed while this was on its way stays on the device until it has gone up too.
-    if (localStorage.getItem(`draft ${key}`) === JSON.stringify(body))
-      localStorage.removeItem(`draft ${key}`);
+    if (localStorage.getItem(`draft ${key}`) === JSON.stringify(body)) localStorage.removeItem(place);
     const time = new Date().toLocaleTimeString('en-GB', { hour: '2-digit', minute: '2-digit' });
     say(`Draft kept ${time}`);
   } catch {

@@ -3,7 +3,7 @@ import type { SessionInput } from '#contracts/session';
 import type { App } from '#server/app';
 import type { Queryable, Transaction } from '#server/db/client';
 import { alerts, sessionItems, targetOverrides, trainingSessions } from '#server/db/schema/index';
-import { notFound } from '#server/errors';
+import { AppError, notFound } from '#server/errors';
 import { isLanding } from '#domain/flight/calendar';
 import { currentFlight, flightPosition } from './flights.ts';
 import type { MemberState } from './members.ts';
@@ -17,6 +17,9 @@ export interface SessionWithItems {
 }
 
 const HISTORY_ITEMS = 80;
+
+const DONE_ALREADY =
+  'This session is written down already, in another window or on another device. Nothing was changed.';
 
 /** The newest done items of a member, newest first: what the load rule looks back on. */
 export function doneItems(at: Queryable, memberId: string) {
@@ -180,7 +183,7 @@ export async function logSession(
       ),
     )
     .returning({ id: trainingSessions.id });
-  if (!row) throw notFound();
+  if (!row) throw new AppError('conflict', DONE_ALREADY);
   // Pain without a movement to its name counts for each of them: better one too light than one too heavy.
   const isNamed = input.items.some(({ pain }) => pain !== 'none');
   const values = told.map(
