@@ -9,7 +9,8 @@ import { memberState } from '#server/services/members';
 import { planNextSession } from '#server/services/training';
 import { CAST, type Person } from './cast.ts';
 import { seededChance, type Chance } from './chance.ts';
-import { liveOn, type Life } from './life.ts';
+import type { Life } from './life-frame.ts';
+import { liveOn } from './life.ts';
 import { DEMO_PLANS, fillMoney, type Payer } from './money.ts';
 import { answersOf, openTroubles } from './troubles.ts';
 

@@ -4,41 +4,14 @@ import { firstTarget } from '#domain/load/first-target';
 import { nextTarget } from '#domain/load/next-target';
 import { planSession } from '#domain/load/plan-session';
 import type { Decision, Done, Target } from '#domain/load/types';
-import type * as schema from '#server/db/schema/index';
 import { liveWeeks, type LivedWeek } from './arcs.ts';
 import type { Person } from './cast.ts';
 import type { Chance } from './chance.ts';
 import { ANSWER_WORDS, LINES, PLACES, WEEK_WORDS, type WeekKind } from './check-in-words.ts';
-
-type Insert<T extends { $inferInsert: unknown }> = T['$inferInsert'];
-
-/** Every row of one life, ready to be written. */
-export interface Life {
-  flights: Insert<typeof schema.flights>[];
-  testDays: Insert<typeof schema.testDays>[];
-  marks: Insert<typeof schema.marks>[];
-  sessions: Insert<typeof schema.trainingSessions>[];
-  items: Insert<typeof schema.sessionItems>[];
-  checkIns: Insert<typeof schema.checkIns>[];
-  messages: Insert<typeof schema.messages>[];
-}
-
-interface Frame {
-  memberId: string;
-  coachId: string;
-  person: Person;
-  /** First local day of the baseline. */
-  startsOn: string;
-  now: Date;
-  chance: Chance;
-}
+import { at, HOURS, type Frame, type Life } from './life-frame.ts';
+import { markOf, TESTS } from './life-marks.ts';
 
 const DAYS = [0, 2, 4];
-const HOURS = [6, 7, 12, 18, 19, 20];
-const at = (day: string, hour: number, minute: number) =>
-  new Date(`${day}T${String(hour).padStart(2, '0')}:${String(minute).padStart(2, '0')}:00Z`);
-
-/** Where a first name may stand, and the place that hurts. */
 const fill = (words: string, { person }: Frame, sessions: number) =>
   words
     .replaceAll('{name}', person.name.split(' ')[0] ?? '')
@@ -55,47 +28,6 @@ function drawer(chance: Chance) {
     seen.add(word);
     used.set(list, seen);
     return word;
-  };
-}
-
-type Test = 'push-ups' | 'sit-ups' | 'stairs';
-const TESTS: readonly Test[] = ['sit-ups', 'push-ups', 'stairs'];
-const NOISE: Record<Test, number> = { 'push-ups': 0.07, 'sit-ups': 0.06, stairs: 0.03 };
-/** Even seven push-ups vary by one from day to day, in counts. */
-const LEAST_SPREAD = 1;
-/** How much of a gain in ability each test shows: stairs move less than push-ups. */
-const GAIN: Record<Test, number> = { 'push-ups': 1.6, 'sit-ups': 0.9, stairs: 0.5 };
-
-function markOf(
-  frame: Frame,
-  test: Test,
-  ability: number,
-  day: string,
-  testDayId: string | null,
-): Insert<typeof schema.marks> {
-  const { person, chance } = frame;
-  const start = person.start[{ 'push-ups': 0, 'sit-ups': 1, stairs: 2 }[test]] ?? 10;
-  const expected = start * (1 + (ability - 1) * GAIN[test]);
-  const spread = Math.max(LEAST_SPREAD, expected * NOISE[test]);
-  const value = Math.max(1, Math.round(chance.normal(expected, spread)));
-  return {
-    id: chance.uuid(),
-    memberId: frame.memberId,
-    testDayId,
-    test,
-    form:
-      test === 'push-ups'
-        ? person.sex === 'male'
-          ? 'floor'
-          : 'knees'
-        : test === 'sit-ups'
-          ? 'feet held'
-          : 'walking',
-    value,
-    takenAt: at(day, chance.pick(HOURS), chance.whole(0, 55)),
-    effort: chance.whole(8, 10),
-    pain: 'none',
-    ...(test === 'stairs' && { stairCount: person.stairs[0], stepHeightMm: person.stairs[1] }),
   };
 }
 
