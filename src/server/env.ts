@@ -71,9 +71,7 @@ function productionProblems(env: z.infer<typeof schema>): string[] {
  * @throws EnvError naming every variable that is wrong and, in production, every demo value left in place.
  */
 export function readEnv(source: Record<string, string | undefined> = process.env) {
-  const known = Object.fromEntries(
-    ENV_NAMES.flatMap((name) => (source[name] ? [[name, source[name]]] : [])),
-  );
+  const known = Object.fromEntries(ENV_NAMES.flatMap((name) => (source[name] ? [[name, source[name]]] : [])));
   const parsed = schema.safeParse(known);
   if (!parsed.success) {
     throw new EnvError(parsed.error.issues.map((issue) => `${issue.path.join('.')}: ${issue.message}`));

@@ -25,12 +25,16 @@ export interface CaseloadRow {
 
 export type CaseloadOrder = 'slipping' | 'name';
 
-/** All members of a coach in the order asked for. Four queries, however many members. @throws AppError signed-out, forbidden */
+/** So many rows on a page; only their push-ups are judged, which is what takes time. */
+export const CASELOAD_PAGE = 40;
+
+/** A page of a coach's members in the order asked for, and how many there are. Four queries. @throws AppError signed-out, forbidden */
 export async function caseload(
   app: App,
   viewer: Viewer,
   order: CaseloadOrder = 'slipping',
-): Promise<CaseloadRow[]> {
+  page = 1,
+): Promise<{ rows: CaseloadRow[]; total: number }> {
   requireRole(viewer, 'coach');
   const now = app.clock.now();
   const people = await app.db
@@ -51,7 +55,7 @@ export async function caseload(
     .orderBy(members.userId, desc(flights.number));
   const ids = people.flatMap(({ flight }) => (flight ? [flight.id] : []));
   const memberIds = people.map(({ id }) => id);
-  const [sessions, changes, pushUps] = await Promise.all([
+  const [sessions, changes] = await Promise.all([
     ids.length === 0
       ? []
       : app.db
@@ -65,7 +69,6 @@ export async function caseload(
           .select({ memberId: targetOverrides.memberId, at: targetOverrides.createdAt })
           .from(targetOverrides)
           .where(inArray(targetOverrides.memberId, memberIds)),
-    pushUpsOf(app, memberIds),
   ]);
   const byFlight = new Map<string, SessionRow[]>();
   for (const session of sessions) {
@@ -76,7 +79,7 @@ export async function caseload(
   const changed = new Map<string, Date[]>();
   for (const { memberId, at } of changes) changed.set(memberId, [...(changed.get(memberId) ?? []), at]);
   const most = Math.max(1, ...[...byFlight.values()].flatMap((rows) => weekLoads(rows)));
-  return people
+  const all = people
     .map((person): CaseloadRow => {
       const rows = person.flight ? (byFlight.get(person.flight.id) ?? []) : [];
       const week = person.flight
@@ -104,10 +107,20 @@ export async function caseload(
             .filter((at) => at >= 1 && at <= week)
             .map((at) => at - 1),
         },
-        pushUps: pushUps.get(person.id) ?? null,
+        pushUps: null,
       };
     })
     .sort((a, b) => (order === 'name' ? 0 : slipped(b) - slipped(a)) || a.name.localeCompare(b.name));
+  const at = Math.max(1, Math.min(page, Math.ceil(all.length / CASELOAD_PAGE)));
+  const rows = all.slice((at - 1) * CASELOAD_PAGE, at * CASELOAD_PAGE);
+  const pushUps = await pushUpsOf(
+    app,
+    rows.map(({ memberId }) => memberId),
+  );
+  return {
+    rows: rows.map((row) => ({ ...row, pushUps: pushUps.get(row.memberId) ?? null })),
+    total: all.length,
+  };
 }
 
 /** Who is held stands first, then who missed the largest share of what was asked. */

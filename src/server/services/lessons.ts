@@ -1,4 +1,4 @@
-import { and, eq, isNotNull } from 'drizzle-orm';
+import { eq } from 'drizzle-orm';
 import type { App } from '#server/app';
 import { lessonReads } from '#server/db/schema/index';
 import { AppError } from '#server/errors';
@@ -105,17 +105,6 @@ export async function markLessonRead(app: App, viewer: Viewer | null, slug: stri
     .insert(lessonReads)
     .values({ memberId: member.id, slug, openedAt: now, readAt: now })
     .onConflictDoUpdate({ target: [lessonReads.memberId, lessonReads.slug], set: { readAt: now } });
-}
-
-/** Remembers the place where a member stopped, as the number of the heading. */
-export async function keepPlace(app: App, viewer: Viewer | null, slug: string, place: number): Promise<void> {
-  const member = requireRole(viewer, 'member');
-  await app.db
-    .update(lessonReads)
-    .set({ place })
-    .where(
-      and(eq(lessonReads.memberId, member.id), eq(lessonReads.slug, slug), isNotNull(lessonReads.openedAt)),
-    );
 }
 
 /** A line to the coach from a lesson, with the place attached; the same `once` writes it once. @throws AppError invalid when it is empty */
