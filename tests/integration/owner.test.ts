@@ -1,7 +1,7 @@
 import { beforeAll, describe, expect, it } from 'vitest';
 import type { App } from '#server/app';
 import { auditEntries, invites, invoices, practice, subscriptions } from '#server/db/schema/index';
-import { caseload } from '#server/services/caseload';
+import { caseload, CASELOAD_PAGE } from '#server/services/caseload';
 import { incomeByMonth, membersByState, planStretches } from '#server/services/income';
 import { inviteCoach, listCoaches, listMembers, moveMember, openInvites } from '#server/services/people';
 import { queueFor } from '#server/services/desk';
@@ -130,6 +130,17 @@ describe('people', () => {
 
 type Room = (app: App, viewer: Viewer) => unknown;
 const enter = async (room: Room, viewer: Viewer) => room(world.app, viewer);
+
+describe('the caseload', () => {
+  it('shows a page of a coach’s own members, and the last page for one beyond it', async () => {
+    const busy = await addPerson(world.app, 'coach');
+    for (let made = 0; made < CASELOAD_PAGE + 2; made += 1)
+      await addMember(world.app, { coach: busy, plan: false });
+    const sizes = [1, 2, 99].map(async (page) => (await caseload(world.app, busy, 'name', page)).rows.length);
+    expect(await Promise.all(sizes)).toEqual([CASELOAD_PAGE, 2, 2]);
+    expect((await caseload(world.app, await addPerson(world.app, 'coach'))).total).toBe(0);
+  });
+});
 
 describe('roles', () => {
   it('keeps the owner’s rooms to the owner, and the desk to coaches', async () => {
