@@ -131,15 +131,14 @@ export async function planItems(
   occasion: Occasion,
 ): Promise<{ title: string; items: PlannedItem[] }> {
   const { flight, week, ordinal } = occasion;
-  const [marks, history, wishes] = await Promise.all([
-    listMarks(at, state.memberId),
-    doneItems(at, state.memberId),
-    at
-      .select()
-      .from(targetOverrides)
-      .where(and(eq(targetOverrides.memberId, state.memberId), isNull(targetOverrides.takenAt)))
-      .orderBy(desc(targetOverrides.createdAt)),
-  ]);
+  // One after the other: inside a transaction there is one connection.
+  const marks = await listMarks(at, state.memberId);
+  const history = await doneItems(at, state.memberId);
+  const wishes = await at
+    .select()
+    .from(targetOverrides)
+    .where(and(eq(targetOverrides.memberId, state.memberId), isNull(targetOverrides.takenAt)))
+    .orderBy(desc(targetOverrides.createdAt));
   const kit = kitOf(state.house ?? { stairCount: 0, matLengthCm: null, chair: false, bar: false });
   const emphasis = flight.emphasis;
   const pregnant = state.screen?.answers['pregnancy'] === 'pregnant';

@@ -16,13 +16,11 @@ export type DueTestDay =
 
 /** Whether a test day is due now, and which. A landing may be taken until the next one comes. */
 export async function dueTestDay(at: Queryable, state: MemberState, now: Date): Promise<DueTestDay> {
-  const [flight, finished] = await Promise.all([
-    currentFlight(at, state.memberId),
-    at
-      .select({ flightId: testDays.flightId, week: testDays.week })
-      .from(testDays)
-      .where(and(eq(testDays.memberId, state.memberId), sql`${testDays.finishedAt} is not null`)),
-  ]);
+  const flight = await currentFlight(at, state.memberId);
+  const finished = await at
+    .select({ flightId: testDays.flightId, week: testDays.week })
+    .from(testDays)
+    .where(and(eq(testDays.memberId, state.memberId), sql`${testDays.finishedAt} is not null`));
   if (!flight) return { kind: 'baseline', week: 0, flightId: null };
   const { week } = flightPosition(flight, now, state.timeZone);
   const landing = Math.min(week, FLIGHT_WEEKS);
