@@ -1,5 +1,6 @@
 import { expect, test, type Page } from '@playwright/test';
 import sharp from 'sharp';
+import { expectNoFindings } from '../support/axe.ts';
 import { choose, letterTo, moveClock, ready, signInAs } from '../support/people.ts';
 import {
   answerReadiness,
@@ -11,11 +12,13 @@ import {
   pictureWithPlace,
   takeTestDay,
 } from '../support/story.ts';
+import { listenForRefusals } from '../support/traffic.ts';
 
 test('the main loop: join, get cleared, test, train, check in, be answered, test again, pay, leave', async ({
   browser,
   page,
 }, info) => {
+  test.setTimeout(600_000);
   const name = `Story ${Date.now().toString(36)}`;
   const address = `${name.toLowerCase().replace(' ', '-')}@skerrow.example`;
   const width = info.project.name.replace('story-', '');
@@ -26,12 +29,9 @@ test('the main loop: join, get cleared, test, train, check in, be answered, test
       path: `test-results/story-${width}/${String(picture).padStart(2, '0')}-${name}.png`,
       fullPage: true,
     });
+    await expectNoFindings(of, name);
   };
-  const violations: string[] = [];
-  page.on(
-    'console',
-    (message) => message.text().includes('Content Security Policy') && violations.push(message.text()),
-  );
+  const refused = await listenForRefusals(page);
 
   await test.step('joins by letter, questions, house and a card that needs authentication', async () => {
     await page.goto('/');
@@ -42,6 +42,7 @@ test('the main loop: join, get cleared, test, train, check in, be answered, test
     await expect(page.getByRole('heading', { name: 'You can begin' })).toBeVisible();
     await snap('result');
     await page.getByRole('link', { name: 'Go on to the house' }).click();
+    await snap('house');
     await measureHouse(page);
     await snap('plan');
     await payWithAuthentication(page);
@@ -209,5 +210,5 @@ test('the main loop: join, get cleared, test, train, check in, be answered, test
     await page.goto('/lessons');
     await expect(page.getByRole('heading', { name: 'Lessons' })).toBeVisible();
   });
-  expect(violations).toEqual([]);
+  expect(refused).toEqual([]);
 });
