@@ -25,6 +25,8 @@ test('the main loop: join, get cleared, test, train, check in, be answered, test
   let picture = 0;
   const snap = async (name: string, of: Page = page) => {
     picture += 1;
+    // Pencil marks that are still being drawn are not what is looked at.
+    await of.emulateMedia({ reducedMotion: 'reduce' });
     await of.screenshot({
       path: `test-results/story-${width}/${String(picture).padStart(2, '0')}-${name}.png`,
       fullPage: true,
