@@ -2,6 +2,7 @@ import { readFileSync, writeFileSync } from 'node:fs';
 import { availableParallelism, loadavg } from 'node:os';
 import { join } from 'node:path';
 import pg from 'pg';
+import { format } from 'prettier';
 import { shareOf } from './bench/load.mjs';
 import { addManyMembers } from './bench/many-members.mjs';
 import { hotPages, repeated, watchPage } from './bench/pages.mjs';
@@ -136,16 +137,19 @@ try {
   const { web, ...loads } = await step('Loads', () => loadAll(many, large.pages, ports));
   const worker = await step('Worker', () => loadWorker(many));
   const seconds = (performance.now() - began) / 1000;
-  const text = report({
-    machine,
-    start,
-    small,
-    large,
-    repeats: repeated,
-    ...loads,
-    memory: { web, ...worker },
-    seconds,
-  });
+  const text = await format(
+    report({
+      machine,
+      start,
+      small,
+      large,
+      repeats: repeated,
+      ...loads,
+      memory: { web, ...worker },
+      seconds,
+    }),
+    { parser: 'markdown' },
+  );
   writeFileSync(join(ROOT, 'docs', 'bench.md'), text);
   console.log(`\n${text}`);
   await stop();
