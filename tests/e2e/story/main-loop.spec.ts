@@ -173,7 +173,7 @@ test('the main loop: join, get cleared, test, train, check in, be answered, test
           await page.goto('/account/membership');
           return page.getByText('did not go through').count();
         },
-        { timeout: 30_000 },
+        { timeout: 60_000 },
       )
       .toBe(1);
     await snap('past-due');
@@ -185,14 +185,25 @@ test('the main loop: join, get cleared, test, train, check in, be answered, test
           await page.goto('/week');
           return page.getByRole('heading', { name: 'Your plan is closed' }).count();
         },
-        { timeout: 30_000 },
+        { timeout: 60_000 },
       )
       .toBe(1);
     await snap('closed');
     await page.goto('/session');
     await expect(page).toHaveURL(/\/account\/membership/);
-    // After the last failed try the plan has ended by itself: the way back is a plan and a card that holds.
-    await page.getByRole('link', { name: 'Choose a plan' }).click();
+    // After the last failed try the plan has ended by itself, once that is written down: the way back is a plan and a
+    // card that holds.
+    const again = page.getByRole('link', { name: 'Choose a plan' });
+    await expect
+      .poll(
+        async () => {
+          await page.goto('/account/membership');
+          return again.count();
+        },
+        { timeout: 60_000 },
+      )
+      .toBe(1);
+    await again.click();
     await payWithAuthentication(page);
     await expect
       .poll(
@@ -200,7 +211,7 @@ test('the main loop: join, get cleared, test, train, check in, be answered, test
           await page.goto('/account/membership');
           return page.getByText('Your plan is paid until').count();
         },
-        { timeout: 30_000 },
+        { timeout: 60_000 },
       )
       .toBe(1);
     await snap('open-again');
