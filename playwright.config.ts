@@ -6,7 +6,7 @@ const asRoot = process.getuid?.() === 0;
 export default defineConfig({
   testDir: 'tests/e2e',
   outputDir: 'test-results',
-  timeout: 240_000,
+  timeout: 300_000,
   expect: { timeout: 15_000 },
   retries: 0,
   workers: 1,
